@@ -1,0 +1,23 @@
+import { defineConfig } from "tsdown";
+
+export default defineConfig({
+  entry: {
+    index: "src/index.ts",
+    quadrature: "src/quadrature/index.ts",
+    special: "src/special/index.ts",
+    determinant: "src/determinant/index.ts",
+    kernels: "src/kernels/index.ts",
+    laws: "src/laws/index.ts",
+    assessment: "src/assessment/index.ts",
+    report: "src/report/index.ts",
+    cli: "src/cli/main.ts",
+  },
+  format: "esm",
+  platform: "neutral",
+  target: "es2022",
+  outDir: "dist",
+  dts: true,
+  clean: true,
+  sourcemap: false,
+  fixedExtension: false,
+});

@@ -1,0 +1,362 @@
+/**
+ * One Nyström determinant: det(I − zK) on given nodes (F. Bornemann, Math. Comp. 79 (2010) 871), by the structured or
+ * the dense elimination, with an estimate of what rounding and kernel evaluation did to it.
+ *
+ * The rounding model (docs/mathematics.md, "Error of a determinant"): a perturbation δA of the matrix changes
+ * log det(I − A) by −tr((I − A)⁻¹ δA) = −tr δA − tr(A (I − A)⁻¹ δA). The first part is bounded by the error of the
+ * diagonal, the second by ‖A‖ ‖δA‖ / (smallest pivot). For a kernel given by generators the entries of δA come from
+ * the cancellation in f(x)g(y) − g(x)f(y) at neighbouring nodes; their size is read off the first off-diagonal.
+ */
+import { InvalidArgumentError } from "../core/errors.ts";
+import { eliminateDensePivoted, eliminateDenseUnpivoted } from "../linalg/dense-general.ts";
+import { eliminateDenseSymmetric } from "../linalg/dense-symmetric.ts";
+import { type PivotSummary, summarizePivots } from "../linalg/pivots.ts";
+import { eliminateStructuredGeneral } from "../linalg/structured-general.ts";
+import { eliminateStructuredSymmetric } from "../linalg/structured-symmetric.ts";
+import { fillPanels, type Panel } from "../quadrature/panels.ts";
+import type { IntegrableKernel, Kernel, SmoothKernel } from "./kernel.ts";
+
+/** A determinant at one order, and its rounding error. */
+export interface Discretized extends PivotSummary {
+  /** Estimated absolute rounding error of `value`. */
+  readonly noise: number;
+  /** Estimated absolute rounding error of `complement`. */
+  readonly complementNoise: number;
+  /** Estimated rounding error of `logAbs`. */
+  readonly logNoise: number;
+  /** z R(s, s) with R the resolvent kernel K (I − zK)⁻¹ at the extra point, NaN if none was asked for. */
+  readonly resolvent: number;
+  /** Estimated absolute rounding error of `resolvent`. */
+  readonly resolventNoise: number;
+}
+
+const EPS = 2 ** -53;
+// A pivot below this many roundings of the matrix is noise.
+const NOISE_PIVOT = 4;
+
+interface Scene {
+  readonly kernel: Kernel;
+  readonly z: number;
+  readonly nodes: Float64Array;
+  readonly roots: Float64Array; // square roots of the weights; 1 at the extra point
+  readonly pivots: number;
+  readonly rows: number;
+  readonly offset: number; // largest |node| over the panel lengths, when the panel sits far from the origin
+}
+
+/**
+ * The determinant on `order` points a panel.
+ *
+ * @param extra - A point at which the resolvent is wanted as well.
+ */
+export function discretizedDeterminant(
+  kernel: Kernel,
+  panels: readonly Panel[],
+  order: number,
+  z: number,
+  extra: number | undefined,
+): Discretized {
+  const pivots = order * panels.length;
+  const rows = pivots + (extra === undefined ? 0 : 1);
+  const nodes = new Float64Array(rows);
+  const roots = new Float64Array(rows);
+  fillPanels(panels, order, nodes, roots);
+  for (let i = 0; i < pivots; i++) roots[i] = Math.sqrt(roots[i]);
+  if (extra !== undefined) {
+    nodes[pivots] = extra;
+    roots[pivots] = 1;
+  }
+  const scene: Scene = { kernel, z, nodes, roots, pivots, rows, offset: farOffset(panels) };
+  if (kernel.kind === "smooth") return smoothDeterminant(scene, kernel);
+  return kernel.antisymmetricPair ? pairDeterminant(scene, kernel) : generalDeterminant(scene, kernel);
+}
+
+function farOffset(panels: readonly Panel[]): number {
+  let most = 0;
+  for (const { lower, upper, mapped } of panels) {
+    if (!mapped) most = Math.max(most, Math.max(Math.abs(lower), Math.abs(upper)) / (upper - lower));
+  }
+  return most > 4 ? most : 0;
+}
+
+/** Two generators, symmetric: the fast route. */
+function pairDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
+  const { z, nodes, roots, pivots, rows } = scene;
+  const a = new Float64Array(rows);
+  const b = new Float64Array(rows);
+  const e = new Float64Array(rows);
+  kernel.sample(nodes, rows, [a, b], [], e);
+  const size = { trace: 0, cancellation: 0, square: 0, variation: 0 };
+  for (let i = 0; i < rows; i++) {
+    const root = roots[i];
+    a[i] *= z * root;
+    b[i] *= root;
+    e[i] *= z * root * root;
+  }
+  for (let i = 0; i < pivots; i++) {
+    size.trace += Math.abs(e[i]);
+    size.square += e[i] * e[i];
+    if (i > 0) {
+      const gap = nodes[i] - nodes[i - 1];
+      const p = a[i] * b[i - 1];
+      const q = b[i] * a[i - 1];
+      const c = (Math.abs(p) + Math.abs(q)) / gap;
+      size.cancellation += c * c;
+    }
+  }
+  const positive = kernel.contraction && Math.abs(z) <= 1;
+  const least = positive ? leastPivot(size) : 1e-3;
+  const done = eliminateStructuredSymmetric(nodes, a, b, e, pivots, rows, least);
+  if (done === pivots) return withNoise(scene, summarizePivots(e, pivots), e, size, kernel.evaluationError);
+  if (positive) return exhausted(scene, e, done, least);
+  // Not positive definite: nothing guards the pivots in their natural order, so the matrix is formed and exchanged.
+  return denseDeterminant(scene, formMatrix(scene, kernel), true, size, kernel.evaluationError);
+}
+
+/** Any rank, any symmetry. */
+function generalDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
+  const { z, nodes, roots, pivots, rows } = scene;
+  const { left, right, e } = sampleGenerators(scene, kernel);
+  const rank = kernel.rank;
+  const f = new Float64Array(rows * rank);
+  const g = new Float64Array(rows * rank);
+  const size = { trace: 0, cancellation: 0, square: 0, variation: 0 };
+  for (let i = 0; i < rows; i++) {
+    e[i] *= z * roots[i] * roots[i];
+    for (let k = 0; k < rank; k++) {
+      f[i * rank + k] = left[k][i] * z * roots[i];
+      g[i * rank + k] = right[k][i] * roots[i];
+    }
+  }
+  for (let i = 0; i < pivots; i++) {
+    size.trace += Math.abs(e[i]);
+    size.square += e[i] * e[i];
+    if (i === 0) continue;
+    let c = 0;
+    for (let k = 0; k < rank; k++) {
+      c += Math.abs(f[i * rank + k] * g[(i - 1) * rank + k]) + Math.abs(f[(i - 1) * rank + k] * g[i * rank + k]);
+    }
+    c *= 0.5 / (nodes[i] - nodes[i - 1]);
+    size.cancellation += c * c;
+  }
+  const { done, growth } = eliminateStructuredGeneral(nodes.slice(), f, g, e, rank, pivots, rows);
+  if (done === pivots && growth < 1e3) {
+    const summary = summarizePivots(e, pivots);
+    size.cancellation *= growth * growth;
+    if (summary.smallestPivot > 1e-6) return withNoise(scene, summary, e, size, kernel.evaluationError);
+  }
+  return denseDeterminant(scene, formMatrix(scene, kernel), false, size, kernel.evaluationError);
+}
+
+/** Formula only. */
+function smoothDeterminant(scene: Scene, kernel: SmoothKernel): Discretized {
+  const { z, nodes, roots, pivots, rows } = scene;
+  const matrix = new Float64Array(rows * rows);
+  const half = kernel.symmetric && !symmetryIsToBeChecked(rows);
+  for (let i = 0; i < rows; i++) {
+    for (let j = 0; j < (half ? i + 1 : rows); j++) {
+      const value = kernel.evaluate(nodes[i], nodes[j]);
+      if (typeof value !== "number" || !Number.isFinite(value)) {
+        throw new InvalidArgumentError(
+          `kernel (${kernel.name})`,
+          `a finite number at (x, y) = (${nodes[i]}, ${nodes[j]})`,
+          value,
+        );
+      }
+      matrix[i * rows + j] = z * roots[i] * value * roots[j];
+    }
+  }
+  let symmetric = kernel.symmetric;
+  if (half) mirror(matrix, rows);
+  else {
+    const found = isSymmetric(matrix, rows, nodes, kernel);
+    if (kernel.symmetryDeclared && kernel.symmetric && found !== true) {
+      throw new InvalidArgumentError(`kernel (${kernel.name})`, "K(x, y) = K(y, x), as declared", found);
+    }
+    symmetric = found === true;
+  }
+  const size = { trace: 0, cancellation: 0, square: 0, variation: 0 };
+  for (let i = 0; i < pivots; i++) {
+    size.trace += Math.abs(matrix[i * rows + i]);
+    for (let j = 0; j < pivots; j++) size.square += matrix[i * rows + j] * matrix[i * rows + j];
+  }
+  return denseDeterminant(scene, matrix, symmetric, size, kernel.evaluationError);
+}
+
+/** Small matrices are cheap: there a declared symmetry is checked. */
+function symmetryIsToBeChecked(rows: number): boolean {
+  return rows <= 26;
+}
+
+function isSymmetric(matrix: Float64Array, n: number, nodes: Float64Array, kernel: SmoothKernel): true | string {
+  let most = 0;
+  for (let i = 0; i < n * n; i++) most = Math.max(most, Math.abs(matrix[i]));
+  const allowed = 16 * (kernel.evaluationError + EPS);
+  for (let i = 0; i < n; i++) {
+    for (let j = 0; j < i; j++) {
+      const p = matrix[i * n + j];
+      const q = matrix[j * n + i];
+      if (Math.abs(p - q) > allowed * (Math.abs(p) + Math.abs(q)) + EPS * EPS * most) {
+        return `K(${nodes[i]}, ${nodes[j]}) ≠ K(${nodes[j]}, ${nodes[i]})`;
+      }
+    }
+  }
+  return true;
+}
+
+function mirror(matrix: Float64Array, n: number): void {
+  for (let i = 0; i < n; i++) for (let j = 0; j < i; j++) matrix[j * n + i] = matrix[i * n + j];
+}
+
+interface Size {
+  trace: number; // Σ |A_ii|
+  cancellation: number; // squares of what cancels in neighbouring entries (generators only)
+  square: number; // squares of the entries known so far
+  variation: number; // reserved for kernels far from the origin
+}
+
+function denseDeterminant(
+  scene: Scene,
+  matrix: Float64Array,
+  symmetric: boolean,
+  size: Size,
+  evaluationError: number,
+): Discretized {
+  const { kernel, z, pivots, rows } = scene;
+  const e = new Float64Array(rows);
+  const kept = matrix.slice();
+  if (scene.offset > 0) size.variation = variation(matrix, rows, pivots);
+  if (symmetric) {
+    const within = kernel.contraction && Math.abs(z) <= 1;
+    const least = within ? leastPivot(size) : 1e-3;
+    const done = eliminateDenseSymmetric(matrix, e, new Float64Array(rows), pivots, rows, rows, least);
+    if (done === pivots) return withNoise(scene, summarizePivots(e, pivots), e, size, evaluationError);
+    if (within) return exhausted(scene, e, done, least);
+  } else {
+    const done = eliminateDenseUnpivoted(matrix, e, pivots, rows, rows, 0.25);
+    if (done === pivots) return withNoise(scene, summarizePivots(e, pivots), e, size, evaluationError);
+  }
+  matrix.set(kept);
+  let resolvent = Number.NaN;
+  if (rows > pivots) resolvent = 1 - borderedRatio(kept, e, pivots, rows);
+  const odd = eliminateDensePivoted(matrix, e, pivots, rows);
+  const summary = summarizePivots(e, pivots, odd);
+  const direct = { ...summary, complement: 1 - summary.value };
+  const result = withNoise(scene, direct, e, size, evaluationError);
+  // Exchanges lose the direct complement: its error is that of the determinant.
+  return { ...result, complementNoise: Math.max(result.noise, result.complementNoise), resolvent };
+}
+
+/** det(I − A) with the extra row over det(I − A) without: 1 − (extra row's e), whatever the pivots did. */
+function borderedRatio(matrix: Float64Array, e: Float64Array, pivots: number, rows: number): number {
+  const full = matrix.slice();
+  const oddFull = eliminateDensePivoted(full, e, rows, rows);
+  const whole = summarizePivots(e, rows, oddFull);
+  const part = matrix.slice();
+  const oddPart = eliminateDensePivoted(part, e, pivots, rows);
+  const rest = summarizePivots(e, pivots, oddPart);
+  return whole.sign * rest.sign * Math.exp(whole.logAbs - rest.logAbs);
+}
+
+/** Sum over columns of their total variation: how much a shift of the nodes by a rounding matters. */
+function variation(matrix: Float64Array, rows: number, pivots: number): number {
+  let sum = 0;
+  for (let j = 0; j < pivots; j++) {
+    for (let i = 1; i < pivots; i++) sum += Math.abs(matrix[i * rows + j] - matrix[(i - 1) * rows + j]);
+  }
+  return sum;
+}
+
+function leastPivot(size: Size): number {
+  return NOISE_PIVOT * EPS * (1 + Math.sqrt(size.cancellation + size.square));
+}
+
+function withNoise(
+  scene: Scene,
+  summary: PivotSummary,
+  e: Float64Array,
+  size: Size,
+  evaluationError: number,
+): Discretized {
+  const { pivots, rows } = scene;
+  const unit = EPS + evaluationError;
+  let raised = 0; // Σ (e_final) − trace: what elimination added to the diagonal
+  let absolute = 0;
+  for (let q = 0; q < pivots; q++) {
+    raised += e[q];
+    absolute += Math.abs(e[q]);
+  }
+  raised = Math.abs(raised) > size.trace ? Math.abs(raised) - size.trace : 0;
+  const norm = Math.sqrt(size.square + 2 * raised * Math.max(1, summary.largestPivot));
+  const entries = unit * Math.sqrt(3.3 * size.cancellation + size.square) + 4 * EPS * norm;
+  const shift = scene.offset * EPS * (size.variation + Math.sqrt(size.cancellation));
+  const smallest = Math.max(summary.smallestPivot, EPS);
+  const relative = 2 * unit * size.trace + (2 * Math.min(norm, 1 + norm * smallest) * entries + shift) / smallest;
+  const logNoise = relative + EPS * (Math.abs(summary.logAbs) + Math.sqrt(pivots));
+  const value = Math.abs(summary.value);
+  const complementNoise = Math.min(1, value || 1) === value ? relative * value + 2 * EPS * Math.min(absolute, 1) : relative * Math.max(value, Number.MIN_VALUE);
+  const resolvent = rows > pivots ? e[pivots] : Number.NaN;
+  return {
+    ...summary,
+    noise: relative * value + EPS * (value + Math.min(1, Math.abs(summary.complement))),
+    complementNoise,
+    logNoise,
+    resolvent,
+    resolventNoise: Math.abs(resolvent) * (relative + 4 * unit),
+  };
+}
+
+/**
+ * A contraction whose next pivot is all rounding. I − zA is then positive: by Hadamard's inequality the determinant of
+ * what remains lies between 0 and the product of its diagonal.
+ */
+function exhausted(scene: Scene, e: Float64Array, done: number, least: number): Discretized {
+  const before = summarizePivots(e, done);
+  let bound = Math.max(0, before.value) * 8 * least;
+  for (let i = done + 1; i < scene.pivots; i++) bound *= Math.max(8 * least, 1 - e[i]);
+  return {
+    value: 0,
+    complement: 1,
+    logAbs: Number.NEGATIVE_INFINITY,
+    sign: 0,
+    smallestPivot: 0,
+    largestPivot: before.largestPivot,
+    noise: bound,
+    complementNoise: bound,
+    logNoise: Number.POSITIVE_INFINITY,
+    resolvent: scene.rows > scene.pivots ? Number.POSITIVE_INFINITY : Number.NaN,
+    resolventNoise: Number.POSITIVE_INFINITY,
+  };
+}
+
+function sampleGenerators(
+  scene: Scene,
+  kernel: IntegrableKernel,
+): { left: Float64Array[]; right: Float64Array[]; e: Float64Array } {
+  const make = (): Float64Array[] => Array.from({ length: kernel.rank }, () => new Float64Array(scene.rows));
+  const left = make();
+  const right = kernel.antisymmetricPair ? [] : make();
+  const e = new Float64Array(scene.rows);
+  kernel.sample(scene.nodes, scene.rows, left, right, e);
+  if (kernel.antisymmetricPair) return { left, right: [left[1], left[0].map((f) => -f)], e };
+  return { left, right, e };
+}
+
+/** The weighted matrix zA of an integrable kernel, for the dense routes. */
+function formMatrix(scene: Scene, kernel: IntegrableKernel): Float64Array {
+  const { z, nodes, roots, rows } = scene;
+  const { left, right, e } = sampleGenerators(scene, kernel);
+  const matrix = new Float64Array(rows * rows);
+  for (let i = 0; i < rows; i++) {
+    for (let j = 0; j < rows; j++) {
+      let value = e[i];
+      if (i !== j) {
+        value = 0;
+        for (let k = 0; k < kernel.rank; k++) value += left[k][i] * right[k][j];
+        value /= nodes[i] - nodes[j];
+      }
+      matrix[i * rows + j] = z * roots[i] * value * roots[j];
+    }
+  }
+  return matrix;
+}

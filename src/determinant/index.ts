@@ -1,0 +1,14 @@
+/**
+ * Fredholm determinants with their errors.
+ *
+ * @packageDocumentation
+ */
+export type { Estimate } from "../core/estimate.ts";
+export {
+  type DeterminantEstimate,
+  type DeterminantOptions,
+  type DeterminantWithResolvent,
+  determinantWithResolvent,
+  fredholmDeterminant,
+} from "./fredholm-determinant.ts";
+export type { Decay, IntegrableKernel, Kernel, KernelTraits, SmoothKernel } from "./kernel.ts";
