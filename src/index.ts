@@ -14,9 +14,21 @@ export {
 } from "./determinant/fredholm-determinant.ts";
 export type { Decay, IntegrableKernel, Kernel, KernelTraits, SmoothKernel } from "./determinant/kernel.ts";
 export { airyKernel } from "./kernels/airy-kernel.ts";
-export { type IntegrableKernelParts, integrableKernel, type RealFunction } from "./kernels/integrable-kernel.ts";
+export {
+  type IntegrableKernelParts,
+  integrableKernel,
+  type RealFunction,
+} from "./kernels/integrable-kernel.ts";
 export { type SmoothKernelOptions, smoothKernel } from "./kernels/smooth-kernel.ts";
 export type { Law, LawAccuracy, LawProvenance, LawQuantity } from "./laws/law.ts";
 export { type QuaternionScaling, type TracyWidomOptions, tracyWidom } from "./laws/tracy-widom.ts";
-export { type Domain, type HalfLine, halfLine, type Interval, interval, type Union, union } from "./quadrature/domain.ts";
+export {
+  type Domain,
+  type HalfLine,
+  halfLine,
+  type Interval,
+  interval,
+  type Union,
+  union,
+} from "./quadrature/domain.ts";
 export { gaussLegendre, type QuadratureRule } from "./quadrature/gauss-legendre.ts";

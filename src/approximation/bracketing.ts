@@ -29,11 +29,13 @@ export function safeNewton(
     if (f > 0 === rising) high = x;
     else low = x;
     const step = f / out[1];
+    if (Math.abs(step) <= 2.3e-16 * Math.abs(x)) return x - step;
     let next = x - step;
     if (!(next > low && next < high)) next = 0.5 * (low + high);
     const moved = Math.abs(next - x);
     // At the rounding floor Newton's steps stop shrinking: stay.
-    if (moved <= 2.3e-16 * Math.abs(x) || (moved < 1e-12 * (1 + Math.abs(x)) && moved >= 0.5 * previous)) return next;
+    if (moved <= 2.3e-16 * Math.abs(x) || (moved < 1e-12 * (1 + Math.abs(x)) && moved >= 0.5 * previous))
+      return next;
     previous = moved;
     x = next;
   }

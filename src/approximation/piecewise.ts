@@ -47,7 +47,8 @@ export class PiecewiseChebyshev {
  */
 export function tabulationPoints(breaks: readonly number[], count: number): Float64Array {
   const points = new Float64Array((breaks.length - 1) * count);
-  for (let p = 0; p + 1 < breaks.length; p++) points.set(chebyshevPoints(count, breaks[p], breaks[p + 1]), p * count);
+  for (let p = 0; p + 1 < breaks.length; p++)
+    points.set(chebyshevPoints(count, breaks[p], breaks[p + 1]), p * count);
   return points;
 }
 

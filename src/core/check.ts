@@ -3,7 +3,8 @@ import { InvalidArgumentError } from "./errors.ts";
 
 /** Finite number, or throw. */
 export function requireFinite(argument: string, value: unknown): number {
-  if (typeof value !== "number" || !Number.isFinite(value)) throw new InvalidArgumentError(argument, "a finite number", value);
+  if (typeof value !== "number" || !Number.isFinite(value))
+    throw new InvalidArgumentError(argument, "a finite number", value);
   return value;
 }
 

@@ -45,7 +45,8 @@ export class InvalidDataError extends InvalidArgumentError {
 }
 
 function describe(value: unknown): string {
-  if (typeof value === "string") return JSON.stringify(value.length > 60 ? `${value.slice(0, 57)}...` : value);
+  if (typeof value === "string")
+    return JSON.stringify(value.length > 60 ? `${value.slice(0, 57)}...` : value);
   if (typeof value === "function") return "a function";
   if (Array.isArray(value)) return `an array of length ${value.length}`;
   if (ArrayBuffer.isView(value)) return `a ${value.constructor.name}`;

@@ -33,6 +33,11 @@ export interface Discretized extends PivotSummary {
 const EPS = 2 ** -53;
 // A pivot below this many roundings of the matrix is noise.
 const NOISE_PIVOT = 4;
+// Safety factors of the rounding model, set so that no case of the honesty sweep comes within a factor 1.5.
+const ENTRY_FACTOR = 2; // entries of the matrix
+const SHIFT_FACTOR = 8; // rounding of nodes far from the origin
+const COMMON_FACTOR = 1.5; // errors that do not average out along the diagonal
+const INDEPENDENT_FACTOR = 3; // errors that do
 
 interface Scene {
   readonly kernel: Kernel;
@@ -86,7 +91,7 @@ function pairDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
   const b = new Float64Array(rows);
   const e = new Float64Array(rows);
   kernel.sample(nodes, rows, [a, b], [], e);
-  const size = { trace: 0, cancellation: 0, square: 0, variation: 0 };
+  const size = newSize();
   for (let i = 0; i < rows; i++) {
     const root = roots[i];
     a[i] *= z * root;
@@ -94,8 +99,7 @@ function pairDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
     e[i] *= z * root * root;
   }
   for (let i = 0; i < pivots; i++) {
-    size.trace += Math.abs(e[i]);
-    size.square += e[i] * e[i];
+    addDiagonal(size, scene, i, e[i], e[i > 0 ? i - 1 : 0]);
     if (i > 0) {
       const gap = nodes[i] - nodes[i - 1];
       const p = a[i] * b[i - 1];
@@ -105,6 +109,7 @@ function pairDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
     }
   }
   const positive = kernel.contraction && Math.abs(z) <= 1;
+  size.square = size.diagonal;
   const least = positive ? leastPivot(size) : 1e-3;
   const done = eliminateStructuredSymmetric(nodes, a, b, e, pivots, rows, least);
   if (done === pivots) return withNoise(scene, summarizePivots(e, pivots), e, size, kernel.evaluationError);
@@ -120,7 +125,7 @@ function generalDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized
   const rank = kernel.rank;
   const f = new Float64Array(rows * rank);
   const g = new Float64Array(rows * rank);
-  const size = { trace: 0, cancellation: 0, square: 0, variation: 0 };
+  const size = newSize();
   for (let i = 0; i < rows; i++) {
     e[i] *= z * roots[i] * roots[i];
     for (let k = 0; k < rank; k++) {
@@ -129,16 +134,17 @@ function generalDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized
     }
   }
   for (let i = 0; i < pivots; i++) {
-    size.trace += Math.abs(e[i]);
-    size.square += e[i] * e[i];
+    addDiagonal(size, scene, i, e[i], e[i > 0 ? i - 1 : 0]);
     if (i === 0) continue;
     let c = 0;
     for (let k = 0; k < rank; k++) {
-      c += Math.abs(f[i * rank + k] * g[(i - 1) * rank + k]) + Math.abs(f[(i - 1) * rank + k] * g[i * rank + k]);
+      c +=
+        Math.abs(f[i * rank + k] * g[(i - 1) * rank + k]) + Math.abs(f[(i - 1) * rank + k] * g[i * rank + k]);
     }
     c *= 0.5 / (nodes[i] - nodes[i - 1]);
     size.cancellation += c * c;
   }
+  size.square = size.diagonal;
   const { done, growth } = eliminateStructuredGeneral(nodes.slice(), f, g, e, rank, pivots, rows);
   if (done === pivots && growth < 1e3) {
     const summary = summarizePivots(e, pivots);
@@ -175,10 +181,16 @@ function smoothDeterminant(scene: Scene, kernel: SmoothKernel): Discretized {
     }
     symmetric = found === true;
   }
-  const size = { trace: 0, cancellation: 0, square: 0, variation: 0 };
+  const size = newSize();
   for (let i = 0; i < pivots; i++) {
-    size.trace += Math.abs(matrix[i * rows + i]);
-    for (let j = 0; j < pivots; j++) size.square += matrix[i * rows + j] * matrix[i * rows + j];
+    const before = i > 0 ? i - 1 : 0;
+    addDiagonal(size, scene, i, matrix[i * rows + i], matrix[before * rows + before]);
+    for (let j = 0; j < pivots; j++) {
+      const entry = matrix[i * rows + j];
+      const tilt = (nodes[i] * (entry / roots[i] - matrix[before * rows + j] / roots[before])) / roots[i];
+      size.square += entry * entry;
+      size.tilt += tilt * tilt;
+    }
   }
   return denseDeterminant(scene, matrix, symmetric, size, kernel.evaluationError);
 }
@@ -188,7 +200,12 @@ function symmetryIsToBeChecked(rows: number): boolean {
   return rows <= 26;
 }
 
-function isSymmetric(matrix: Float64Array, n: number, nodes: Float64Array, kernel: SmoothKernel): true | string {
+function isSymmetric(
+  matrix: Float64Array,
+  n: number,
+  nodes: Float64Array,
+  kernel: SmoothKernel,
+): true | string {
   let most = 0;
   for (let i = 0; i < n * n; i++) most = Math.max(most, Math.abs(matrix[i]));
   const allowed = 16 * (kernel.evaluationError + EPS);
@@ -208,11 +225,29 @@ function mirror(matrix: Float64Array, n: number): void {
   for (let i = 0; i < n; i++) for (let j = 0; j < i; j++) matrix[j * n + i] = matrix[i * n + j];
 }
 
+/** Sums over the matrix A that the rounding model reads. */
 interface Size {
   trace: number; // Σ |A_ii|
-  cancellation: number; // squares of what cancels in neighbouring entries (generators only)
-  square: number; // squares of the entries known so far
-  variation: number; // reserved for kernels far from the origin
+  diagonal: number; // Σ A_ii²
+  slope: number; // Σ |x_i| |K_ii − K_(i−1)(i−1)|: roundings of the argument move the trace by so many units
+  cancellation: number; // Σ of squares of what cancels in neighbouring entries (generators only)
+  square: number; // Σ A_ij², as far as the entries are known
+  tilt: number; // the same for the squares of all entries (dense only)
+}
+
+function newSize(): Size {
+  return { trace: 0, diagonal: 0, slope: 0, cancellation: 0, square: 0, tilt: 0 };
+}
+
+/** Reads the weighted diagonal entries into the size. */
+function addDiagonal(size: Size, scene: Scene, i: number, entry: number, before: number): void {
+  const { roots, nodes } = scene;
+  size.trace += Math.abs(entry);
+  size.diagonal += entry * entry;
+  if (i > 0)
+    size.slope += Math.abs(
+      nodes[i] * (entry / (roots[i] * roots[i]) - before / (roots[i - 1] * roots[i - 1])),
+    );
 }
 
 function denseDeterminant(
@@ -225,7 +260,6 @@ function denseDeterminant(
   const { kernel, z, pivots, rows } = scene;
   const e = new Float64Array(rows);
   const kept = matrix.slice();
-  if (scene.offset > 0) size.variation = variation(matrix, rows, pivots);
   if (symmetric) {
     const within = kernel.contraction && Math.abs(z) <= 1;
     const least = within ? leastPivot(size) : 1e-3;
@@ -258,15 +292,6 @@ function borderedRatio(matrix: Float64Array, e: Float64Array, pivots: number, ro
   return whole.sign * rest.sign * Math.exp(whole.logAbs - rest.logAbs);
 }
 
-/** Sum over columns of their total variation: how much a shift of the nodes by a rounding matters. */
-function variation(matrix: Float64Array, rows: number, pivots: number): number {
-  let sum = 0;
-  for (let j = 0; j < pivots; j++) {
-    for (let i = 1; i < pivots; i++) sum += Math.abs(matrix[i * rows + j] - matrix[(i - 1) * rows + j]);
-  }
-  return sum;
-}
-
 function leastPivot(size: Size): number {
   return NOISE_PIVOT * EPS * (1 + Math.sqrt(size.cancellation + size.square));
 }
@@ -279,22 +304,32 @@ function withNoise(
   evaluationError: number,
 ): Discretized {
   const { pivots, rows } = scene;
-  const unit = EPS + evaluationError;
-  let raised = 0; // Σ (e_final) − trace: what elimination added to the diagonal
   let absolute = 0;
+  let final = 0;
   for (let q = 0; q < pivots; q++) {
-    raised += e[q];
+    final += e[q];
     absolute += Math.abs(e[q]);
   }
-  raised = Math.abs(raised) > size.trace ? Math.abs(raised) - size.trace : 0;
+  // Σ e_final − trace = Σ v²/m over all eliminated entries: twice that is the squared norm of the off-diagonal part.
+  const raised = Math.max(0, Math.abs(final) - size.trace);
   const norm = Math.sqrt(size.square + 2 * raised * Math.max(1, summary.largestPivot));
-  const entries = unit * Math.sqrt(3.3 * size.cancellation + size.square) + 4 * EPS * norm;
-  const shift = scene.offset * EPS * (size.variation + Math.sqrt(size.cancellation));
+  const unit = EPS + evaluationError;
+  const shift = scene.offset * EPS * Math.sqrt(size.cancellation);
+  const entries =
+    ENTRY_FACTOR *
+      (unit * Math.sqrt(3.3 * size.cancellation + size.square) + EPS * (norm + Math.sqrt(size.tilt))) +
+    SHIFT_FACTOR * shift;
   const smallest = Math.max(summary.smallestPivot, EPS);
-  const relative = 2 * unit * size.trace + (2 * Math.min(norm, 1 + norm * smallest) * entries + shift) / smallest;
+  // Independent errors of the diagonal add in squares; a common factor (a rounded constant in the kernel) does not.
+  const trace =
+    COMMON_FACTOR * EPS * (size.trace + size.slope) +
+    INDEPENDENT_FACTOR * evaluationError * Math.sqrt(size.diagonal);
+  const relative = trace + (Math.min(norm, 1 + norm * smallest) * entries) / smallest + SHIFT_FACTOR * shift;
   const logNoise = relative + EPS * (Math.abs(summary.logAbs) + Math.sqrt(pivots));
   const value = Math.abs(summary.value);
-  const complementNoise = Math.min(1, value || 1) === value ? relative * value + 2 * EPS * Math.min(absolute, 1) : relative * Math.max(value, Number.MIN_VALUE);
+  const complementNoise =
+    relative * (value || Number.MIN_VALUE) +
+    EPS * (Math.abs(summary.complement) < 0.5 ? absolute : 1 + value);
   const resolvent = rows > pivots ? e[pivots] : Number.NaN;
   return {
     ...summary,

@@ -43,7 +43,7 @@ export interface DeterminantWithResolvent extends DeterminantEstimate {
   readonly resolvent: Estimate;
 }
 
-const FIRST_ORDER = 16;
+const FIRST_ORDER = 8;
 const MOST_STRUCTURED = 4096;
 const MOST_DENSE = 512;
 
@@ -110,20 +110,32 @@ function refine(
   point: number | undefined,
 ): DeterminantWithResolvent {
   if (kernel?.kind !== "integrable" && kernel?.kind !== "smooth") {
-    throw new InvalidArgumentError("kernel", "a kernel made by integrableKernel(), smoothKernel() or a built-in one", kernel);
+    throw new InvalidArgumentError(
+      "kernel",
+      "a kernel made by integrableKernel(), smoothKernel() or a built-in one",
+      kernel,
+    );
   }
   const z = options.z === undefined ? 1 : requireFinite("options.z", options.z);
   const tolerance = readTolerance(options);
   const cap = kernel.kind === "smooth" ? MOST_DENSE : MOST_STRUCTURED;
   const limit = kernel.kind === "smooth" ? 4096 : 100_000;
-  const maxOrder = options.maxOrder === undefined ? cap : requireInteger("options.maxOrder", options.maxOrder, 1, limit);
-  const order = options.order === undefined ? undefined : requireInteger("options.order", options.order, 1, limit);
+  const maxOrder =
+    options.maxOrder === undefined ? cap : requireInteger("options.maxOrder", options.maxOrder, 1, limit);
+  const order =
+    options.order === undefined ? undefined : requireInteger("options.order", options.order, 1, limit);
   const truncation = truncate(partsOf(domain), kernel, z);
   if (z === 0) return { ...exactlyOne(), resolvent: exact(0) };
   const at = (n: number): Discretized => discretizedDeterminant(kernel, truncation.panels, n, z, point);
   if (order === undefined) return settle(at, maxOrder, tolerance, truncation, point).result;
   const asked = at(order);
-  const best = settle(at, Math.max(maxOrder, Math.min(2 * order, limit)), { ...tolerance, finest: true }, truncation, point);
+  const best = settle(
+    at,
+    Math.max(maxOrder, Math.min(2 * order, limit)),
+    { ...tolerance, finest: true },
+    truncation,
+    point,
+  );
   return fixedOrder(asked, order, best.result, tolerance);
 }
 
@@ -153,8 +165,8 @@ function settle(
   let current = at(n);
   const trail: Trail = { value: [], complement: [], resolvent: [] };
   for (;;) {
-    const next = Math.min(maxOrder, Math.max(n + 1, Math.ceil((n * 4) / 3)));
-    if (next <= n) return { result: assemble(current, n, trail, tolerance, truncation, false) };
+    const next = Math.max(n + 1, Math.ceil((n * 4) / 3));
+    if (next > maxOrder) return { result: assemble(current, n, trail, tolerance, truncation, false) };
     const refined = at(next);
     trail.value.push(Math.abs(refined.value - current.value));
     trail.complement.push(Math.abs(refined.complement - current.complement));
@@ -162,8 +174,9 @@ function settle(
     n = next;
     current = refined;
     if (trail.value.length < 2) continue;
-    if (isSettled(trail, current, point !== undefined)) return { result: assemble(current, n, trail, tolerance, truncation, true) };
-    if (!tolerance.finest) {
+    if (isSettled(trail, current, point !== undefined))
+      return { result: assemble(current, n, trail, tolerance, truncation, true) };
+    if (!tolerance.finest && trail.value.length >= 3) {
       const result = assemble(current, n, trail, tolerance, truncation, false);
       if (result.converged && (point === undefined || result.resolvent.converged)) return { result };
     }
@@ -183,22 +196,45 @@ function quiet(differences: readonly number[], noise: number, scale: number): bo
   const k = differences.length - 1;
   const last = differences[k];
   const before = differences[k - 1];
-  // One small difference may be chance. With orders growing by 4/3, geometric convergence leaves about noise^(3/4)
-  // one step earlier: the square root is a safe reading of that.
-  if (last <= noise && before <= Math.sqrt(noise * scale)) return true;
-  return k >= 2 && last <= 1e3 * noise && last >= 0.25 * before && before <= 1e3 * noise;
+  // One small difference may be chance: the one before must already predict an error below the noise.
+  if (last <= noise && predicted(differences, scale) <= noise) return true;
+  return (
+    k >= 3 &&
+    last <= 1e3 * noise &&
+    last >= 0.25 * before &&
+    before <= 1e3 * noise &&
+    before >= 0.25 * differences[k - 2]
+  );
+}
+
+/**
+ * Error of the newest approximation when convergence is geometric in the order, err = S ρ^(−2n): as the order grows by
+ * 4/3 at a time, err_k / S = (err_{k−1} / S)^(4/3), and the difference D_k is about err_{k−1}. The worst of the last
+ * three differences speaks, so that one that is small by chance does not.
+ */
+function predicted(differences: readonly number[], scale: number): number {
+  const k = differences.length - 1;
+  let error = 0;
+  for (let back = 0; back <= 2 && back <= k; back++) {
+    error = Math.max(error, scale * Math.min(1, differences[k - back] / scale) ** ((4 / 3) ** (back + 1)));
+  }
+  return error;
 }
 
 /** Error of the newest of a sequence of approximations, from their differences. */
-function quadratureError(differences: readonly number[], settled: boolean): number {
+function quadratureError(differences: readonly number[], settled: boolean, scale: number): number {
   const k = differences.length - 1;
   if (k < 0) return Number.POSITIVE_INFINITY;
-  if (settled) return k > 0 && differences[k] < differences[k - 1] * 0.25 ? differences[k] : Math.max(differences[k], differences[k - 1] ?? 0);
+  if (settled) {
+    const falling = k > 0 && differences[k] < 0.25 * differences[k - 1];
+    return falling ? differences[k] : Math.max(differences[k], differences[k - 1] ?? 0);
+  }
   if (k < 1) return 10 * differences[k];
+  // Algebraic convergence: the differences fall by a constant ratio.
   const ratio = (p: number): number => (differences[p - 1] > 0 ? differences[p] / differences[p - 1] : 1);
   const worst = k >= 2 ? Math.max(ratio(k), ratio(k - 1)) : ratio(k);
   const r = Math.min(Math.max(worst, 1e-3), 0.95);
-  return (8 * Math.max(differences[k], 0.05 * differences[k - 1] * r) * r) / (1 - r);
+  return 20 * Math.max((differences[k] * r) / (1 - r), predicted(differences, scale));
 }
 
 function assemble(
@@ -210,8 +246,10 @@ function assemble(
   settled: boolean,
 ): DeterminantWithResolvent {
   const scale = Math.min(1, Math.abs(current.value)) || 1;
+  const c = Math.abs(current.complement);
+  const size = c < 0.5 ? c : 1;
   const estimate = (value: number, noise: number, differences: readonly number[], cut: number): Estimate => {
-    const error = noise + quadratureError(differences, settled) + cut;
+    const error = noise + quadratureError(differences, settled, Math.max(size, Math.abs(value))) + cut;
     const converged = error <= Math.max(tolerance.absolute, tolerance.relative * Math.abs(value));
     return { value, error, errorKind: "estimate", converged, order };
   };
@@ -222,7 +260,12 @@ function assemble(
     ...main,
     logAbs: current.logAbs,
     sign: current.sign,
-    complement: estimate(current.complement, current.complementNoise, trail.complement, truncation.error * scale),
+    complement: estimate(
+      current.complement,
+      current.complementNoise,
+      trail.complement,
+      truncation.error * scale,
+    ),
     resolvent: estimate(current.resolvent, current.resolventNoise, trail.resolvent, truncation.error),
   };
 }

@@ -22,7 +22,7 @@ export function truncate(parts: readonly (Interval | HalfLine)[], kernel: Kernel
   const panels = parts.map((part): Panel => {
     if (part.kind === "interval") return { lower: part.lower, upper: part.upper, mapped: false };
     const cut = kernel.decay ? cutByDecay(part.lower, kernel.decay.tail) : cutByProbing(part.lower, kernel);
-    if (cut === "power-like") return { lower: part.lower, upper: part.lower + 1, mapped: true };
+    if ("scale" in cut) return { lower: part.lower, upper: part.lower + cut.scale, mapped: true };
     error += Math.abs(z) * cut.error;
     return { lower: part.lower, upper: cut.at, mapped: false };
   });
@@ -52,22 +52,28 @@ function cutByDecay(lower: number, tail: (lower: number, cut: number) => number)
 
 const PROBES = 12; // probe points for each length tried
 const LENGTHS = 24; // lengths tried, from 0.5 up by factors √2: to about 1400
+// An exponential falls to 2⁻⁶⁰ within 30 times the length in which it falls to 1/4; a power takes far longer.
+const MOST_FALLS = 60;
 
-function cutByProbing(lower: number, kernel: Kernel): Cut | "power-like" {
+function cutByProbing(lower: number, kernel: Kernel): Cut | { readonly scale: number } {
   const size = kernelSize(kernel, lower);
-  let whole = 0;
+  let most = 0;
+  let quarter = 0; // first length beyond which the kernel stays below a quarter of its largest value
   let step = 0.5;
   for (let k = 0; k < LENGTHS; k++, step *= Math.SQRT2) {
-    // Largest size just inside the cut; and beyond it, so that a passing zero or a gap does not look like decay.
-    const inside = largestOn(size, lower, lower + step);
-    whole = Math.max(whole, inside * step);
-    const beyond = largestOn(size, lower + step, lower + 3 * step) * step;
-    if (whole > 0 && beyond <= SHARE * whole) return { at: lower + step, error: 4 * beyond };
+    most = Math.max(most, largestOn(size, lower, lower + step));
+    // Beyond the cut a stretch twice as long is probed, so that a passing zero or a gap does not look like decay.
+    const beyond = largestOn(size, lower + step, lower + 3 * step);
+    if (quarter === 0 && beyond <= 0.25 * most) quarter = step;
+    if (most > 0 && beyond <= SHARE * most && step <= MOST_FALLS * quarter) {
+      return { at: lower + step, error: 4 * beyond * step };
+    }
   }
-  // Not exponentially small by now. Trace class needs more than 1/x: compare x·size over six octaves.
+  // Decays like a power. Trace class needs more than 1/x: compare x·size over six octaves.
   const near = largestOn(size, lower + step, lower + 2 * step) * step;
   const far = largestOn(size, lower + 64 * step, lower + 128 * step) * 64 * step;
-  if (whole === 0 || far < 0.25 * near) return "power-like";
+  if (quarter > 0 && (near === 0 || far < 0.25 * near)) return { scale: quarter };
+  if (most === 0) return { at: lower + 1, error: 0 };
   throw new InvalidArgumentError(
     "domain",
     `a half-line on which ${kernel.name} decays faster than 1/x`,
@@ -92,13 +98,17 @@ function kernelSize(kernel: Kernel, lower: number): (x: number) => number {
       // |K(x,x)| enters at first order, K(x,y)K(y,x) for y near the lower end at second order.
       const near = lower + 0.25 * Math.min(1, x - lower);
       const first = Math.abs(finite(kernel, x, kernel.evaluate(x, x)));
-      const second = Math.abs(finite(kernel, x, kernel.evaluate(x, near)) * finite(kernel, x, kernel.evaluate(near, x)));
+      const second = Math.abs(
+        finite(kernel, x, kernel.evaluate(x, near)) * finite(kernel, x, kernel.evaluate(near, x)),
+      );
       return first + second;
     };
   }
   const nodes = new Float64Array(1);
   const left = Array.from({ length: kernel.rank }, () => new Float64Array(1));
-  const right = kernel.antisymmetricPair ? [] : Array.from({ length: kernel.rank }, () => new Float64Array(1));
+  const right = kernel.antisymmetricPair
+    ? []
+    : Array.from({ length: kernel.rank }, () => new Float64Array(1));
   const diagonal = new Float64Array(1);
   return (x) => {
     nodes[0] = x;

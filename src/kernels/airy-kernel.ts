@@ -25,7 +25,7 @@ const AIRY_KERNEL: IntegrableKernel = Object.freeze({
   antisymmetricPair: true,
   symmetric: true,
   contraction: true,
-  evaluationError: 4e-16,
+  evaluationError: 6e-16,
   decay: { tail: (_lower: number, cut: number) => traceTail(cut) },
   sample(
     nodes: Float64Array,

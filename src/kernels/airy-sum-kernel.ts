@@ -23,7 +23,7 @@ const AIRY_SUM_KERNEL: SmoothKernel = Object.freeze({
   symmetric: true,
   symmetryDeclared: true,
   contraction: true,
-  evaluationError: 4e-16,
+  evaluationError: 6e-16,
   decay: { tail },
   evaluate: (x: number, y: number): number => 0.5 * airyAi(0.5 * (x + y)),
 });

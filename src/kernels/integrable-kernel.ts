@@ -56,14 +56,22 @@ export function integrableKernel(parts: IntegrableKernelParts): IntegrableKernel
   if (!Array.isArray(left) || left.length < 2) {
     throw new InvalidArgumentError("left", "an array of at least two functions", left);
   }
-  left.forEach((f, k) => requireFunction(`left[${k}]`, f));
+  for (const [k, f] of left.entries()) requireFunction(`left[${k}]`, f);
   if (right === undefined && left.length !== 2) {
-    throw new InvalidArgumentError("right", `an array of ${left.length} functions (it may be left out only for r = 2)`, right);
+    throw new InvalidArgumentError(
+      "right",
+      `an array of ${left.length} functions (it may be left out only for r = 2)`,
+      right,
+    );
   }
   if (right !== undefined && (!Array.isArray(right) || right.length !== left.length)) {
-    throw new InvalidArgumentError("right", `an array of ${left.length} functions, one for each of left`, right);
+    throw new InvalidArgumentError(
+      "right",
+      `an array of ${left.length} functions, one for each of left`,
+      right,
+    );
   }
-  right?.forEach((g, k) => requireFunction(`right[${k}]`, g));
+  for (const [k, g] of right?.entries() ?? []) requireFunction(`right[${k}]`, g);
   requireFunction("diagonal", diagonal);
   const name = parts.name ?? "integrable kernel";
   const call = (label: string, f: RealFunction, x: number): number => {

@@ -45,8 +45,10 @@ export function completeLaw(core: LawCore): Law {
     moments ??= momentsByQuadrature(core);
     return moments;
   };
-  const lower = (p: number): number => (p <= 0.5 ? solveLower(core, Math.log(p)) : solveUpper(core, Math.log1p(-p)));
-  const upper = (q: number): number => (q <= 0.5 ? solveUpper(core, Math.log(q)) : solveLower(core, Math.log1p(-q)));
+  const lower = (p: number): number =>
+    p <= 0.5 ? solveLower(core, Math.log(p)) : solveUpper(core, Math.log1p(-p));
+  const upper = (q: number): number =>
+    q <= 0.5 ? solveUpper(core, Math.log(q)) : solveLower(core, Math.log1p(-q));
   const quantile = (p: number): number => (Number.isNaN(p) ? p : lower(requireProbability("p", p)));
   const upperQuantile = (q: number): number => (Number.isNaN(q) ? q : upper(requireProbability("q", q)));
   return Object.freeze({
@@ -86,19 +88,25 @@ export function completeLaw(core: LawCore): Law {
     upperQuantileInto: into(upperQuantile),
     sample(count: number, generator: UniformGenerator): Float64Array {
       requireInteger("count", count, 0, 2 ** 31);
-      if (typeof generator !== "function") throw new InvalidArgumentError("generator", "a function", generator);
+      if (typeof generator !== "function")
+        throw new InvalidArgumentError("generator", "a function", generator);
       const out = new Float64Array(count);
       for (let i = 0; i < count; i++) out[i] = lower(requireProbability("generator()", generator()));
       return out;
     },
     estimate(what: LawQuantity, x: number, options: ExactOptions = {}): Estimate {
       if (typeof x !== "number" || Number.isNaN(x)) throw new InvalidArgumentError("x", "a number", x);
-      if (what === "quantile") return exactQuantile(core, "cdf", requireProbability("x", x), quantile(x), options);
+      if (what === "quantile")
+        return exactQuantile(core, "cdf", requireProbability("x", x), quantile(x), options);
       if (what === "upperQuantile") {
         return exactQuantile(core, "survival", requireProbability("x", x), upperQuantile(x), options);
       }
       if (!POINTWISE.includes(what)) {
-        throw new InvalidArgumentError("what", `one of ${POINTWISE.join(", ")}, quantile, upperQuantile`, what);
+        throw new InvalidArgumentError(
+          "what",
+          `one of ${POINTWISE.join(", ")}, quantile, upperQuantile`,
+          what,
+        );
       }
       return core.exact(what, x, options);
     },
@@ -175,7 +183,10 @@ function exactQuantile(
   const value = start - step;
   const error = at.error / density.value + step * step * (1 + Math.abs(value)) + 2 ** -52 * Math.abs(value);
   const { absTol, relTol } = options;
-  const tolerance = absTol === undefined && relTol === undefined ? 1e-12 : Math.max(absTol ?? 0, (relTol ?? 0) * Math.abs(value));
+  const tolerance =
+    absTol === undefined && relTol === undefined
+      ? 1e-12
+      : Math.max(absTol ?? 0, (relTol ?? 0) * Math.abs(value));
   return { value, error, errorKind: "estimate", converged: error <= tolerance, order: at.order };
 }
 
@@ -204,7 +215,14 @@ function momentsByQuadrature(core: LawCore): LawMoments {
   const [m2, m3, m4, m5, m6] = [central[2], central[3], central[4], central[5], central[6]];
   const mean = core.centre + shift;
   // Cumulants from central moments (M. Kendall, A. Stuart, The Advanced Theory of Statistics 1, § 3.14).
-  const cumulants = [mean, m2, m3, m4 - 3 * m2 * m2, m5 - 10 * m3 * m2, m6 - 15 * m4 * m2 - 10 * m3 * m3 + 30 * m2 ** 3];
+  const cumulants = [
+    mean,
+    m2,
+    m3,
+    m4 - 3 * m2 * m2,
+    m5 - 10 * m3 * m2,
+    m6 - 15 * m4 * m2 - 10 * m3 * m3 + 30 * m2 ** 3,
+  ];
   return {
     mean,
     variance: m2,
@@ -215,7 +233,15 @@ function momentsByQuadrature(core: LawCore): LawMoments {
 }
 
 function centralMoments(raw: Float64Array, shift: number): number[] {
-  const binomial = [[1], [1, 1], [1, 2, 1], [1, 3, 3, 1], [1, 4, 6, 4, 1], [1, 5, 10, 10, 5, 1], [1, 6, 15, 20, 15, 6, 1]];
+  const binomial = [
+    [1],
+    [1, 1],
+    [1, 2, 1],
+    [1, 3, 3, 1],
+    [1, 4, 6, 4, 1],
+    [1, 5, 10, 10, 5, 1],
+    [1, 6, 15, 20, 15, 6, 1],
+  ];
   return binomial.map((row, k) => {
     let sum = 0;
     for (let j = 0; j <= k; j++) sum += (row[j] * raw[j] * (-shift) ** (k - j)) / raw[0];

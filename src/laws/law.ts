@@ -125,7 +125,11 @@ export interface Law {
    * @param x - The point; for the quantiles, the probability.
    * @param options - Tolerances for the exact route.
    */
-  estimate(what: LawQuantity, x: number, options?: { readonly absTol?: number; readonly relTol?: number }): Estimate;
+  estimate(
+    what: LawQuantity,
+    x: number,
+    options?: { readonly absTol?: number; readonly relTol?: number },
+  ): Estimate;
 }
 
 /** The six cumulants, mean, variance, skewness and excess kurtosis of a law. */

@@ -9,14 +9,18 @@
  * P. Ferrari, H. Spohn, J. Phys. A 38 (2005) L557. Derivatives: (log det)' = R(s, s), R the resolvent kernel.
  */
 import type { Estimate } from "../core/estimate.ts";
-import { type DeterminantOptions, type DeterminantWithResolvent, determinantWithResolvent } from "../determinant/fredholm-determinant.ts";
+import {
+  type DeterminantOptions,
+  type DeterminantWithResolvent,
+  determinantWithResolvent,
+} from "../determinant/fredholm-determinant.ts";
 import { airyKernel } from "../kernels/airy-kernel.ts";
 import { airySumKernel } from "../kernels/airy-sum-kernel.ts";
 import { halfLine } from "../quadrature/domain.ts";
 import { airyExponent } from "../special/airy.ts";
 import { tracyWidomLeftTail } from "./hastings-mcleod.ts";
-import { fourthMinors } from "./tracy-widom-minors.ts";
 import { scaledRightTail } from "./tracy-widom-far.ts";
+import { fourthMinors } from "./tracy-widom-minors.ts";
 
 /** The three laws; β = 4 in the unscaled variable. */
 export type Beta = 1 | 2 | 4;
@@ -39,7 +43,7 @@ export const LEFT_SWITCH: Readonly<Record<Beta, number>> = { 1: -4, 2: -4, 4: -6
 /** Right of this point the first term of the tail is exact to rounding: the rest is of relative size 1 − F < 1e-18. */
 export const RIGHT_SWITCH: Readonly<Record<Beta, number>> = { 1: 15, 2: 9.5, 4: 6 };
 // Right of this point 1 − F for β = 4 comes from the minors of V: as ½(c₋ + c₊) it would cancel.
-const MINOR_SWITCH = -1;
+const MINOR_SWITCH = -2.01;
 
 /** The law at s by the exact route. */
 export function exactPoint(beta: Beta, s: number, options: DeterminantOptions = {}): ExactPoint {
@@ -57,7 +61,12 @@ function estimate(value: number, error: number, converged: boolean, order: numbe
 /** Product of two estimates: relative errors add. */
 function product(p: Estimate, q: Estimate): Estimate {
   const error = p.error * Math.abs(q.value) + q.error * Math.abs(p.value) + p.error * q.error;
-  return estimate(p.value * q.value, error + 2 ** -52 * Math.abs(p.value * q.value), p.converged && q.converged, p.order);
+  return estimate(
+    p.value * q.value,
+    error + 2 ** -52 * Math.abs(p.value * q.value),
+    p.converged && q.converged,
+    p.order,
+  );
 }
 
 function logOf(p: Estimate, log: number): Estimate {
@@ -90,7 +99,12 @@ function meanPoint(s: number, options: DeterminantOptions): ExactPoint {
   const minus = determinantWithResolvent(airySumKernel(), halfLine(s), s, options);
   const plus = determinantWithResolvent(airySumKernel(), halfLine(s), s, { ...options, z: -1 });
   const mean = (p: Estimate, q: Estimate): Estimate =>
-    estimate(0.5 * (p.value + q.value), 0.5 * (p.error + q.error), p.converged && q.converged, Math.max(p.order, q.order));
+    estimate(
+      0.5 * (p.value + q.value),
+      0.5 * (p.error + q.error),
+      p.converged && q.converged,
+      Math.max(p.order, q.order),
+    );
   const pdf = mean(product(minus, minus.resolvent), product(plus, plus.resolvent));
   return pointFrom(mean(minus, plus), mean(minus.complement, plus.complement), pdf);
 }
@@ -157,7 +171,10 @@ export function expMinusExponent(kappa: number, s: number): number {
 }
 
 /** Both determinants for the tests of F1 · det(I + V) = F2. */
-export function sumKernelDeterminants(s: number): { minus: DeterminantWithResolvent; plus: DeterminantWithResolvent } {
+export function sumKernelDeterminants(s: number): {
+  minus: DeterminantWithResolvent;
+  plus: DeterminantWithResolvent;
+} {
   const at = (z: number): DeterminantWithResolvent =>
     determinantWithResolvent(airySumKernel(), halfLine(s), s, { z });
   return { minus: at(1), plus: at(-1) };

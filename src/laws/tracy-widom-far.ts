@@ -22,6 +22,9 @@ export interface ScaledTail {
 }
 
 const ORDER = 40;
+// Where products of two Airy functions, and single ones, may be cut: e^{−46} = 1e-20.
+const SQUARED = 23;
+const LINEAR = 46;
 
 /** Scaled first term of the right tail, for s > −2.3 (β = 4) or s ≥ 0 (β = 1, 2). */
 export function scaledRightTail(beta: 1 | 2 | 4, s: number): ScaledTail {
@@ -44,16 +47,17 @@ function relativeAiry(s: number, u: number): number {
   return airyAiScaled(s + u) * Math.exp(-exponentRise(s, u));
 }
 
-/** Length after which Ai(s + u)/Ai(s) is below e^{−23}: squares are then below 1e-20. */
-function reach(s: number): number {
-  if (s < 0) return reach(0) - s;
-  // (s + u)^{3/2} = s^{3/2} + 34.5
-  return (s * Math.sqrt(s) + 34.5) ** (2 / 3) - s || 23 / Math.sqrt(s);
+/** Length after which Ai(s + u)/Ai(s) is below e^{−decay}. */
+function reach(s: number, decay: number): number {
+  if (s < 0) return reach(0, decay) - s;
+  const power = s * Math.sqrt(s);
+  // (s + u)^{3/2} = s^{3/2} + 1.5 decay; far out the difference is its first term.
+  return s < 1e4 ? (power + 1.5 * decay) ** (2 / 3) - s : decay / Math.sqrt(s);
 }
 
 function squareTail(s: number): number {
   const { nodes, weights } = gaussLegendreShared(ORDER);
-  const half = 0.5 * reach(s);
+  const half = 0.5 * reach(s, SQUARED);
   let sum = 0;
   for (let i = 0; i < ORDER; i++) {
     const u = half * (1 + nodes[i]);
@@ -65,13 +69,13 @@ function squareTail(s: number): number {
 
 function quarticTail(s: number): ScaledTail {
   const { nodes, weights } = gaussLegendreShared(ORDER);
-  const half = 0.5 * reach(s);
+  const half = 0.5 * reach(s, SQUARED);
   let survival = 0;
   let density = 0;
   for (let i = 0; i < ORDER; i++) {
     const u = half * (1 + nodes[i]);
     const outer = relativeAiry(s, u);
-    const innerHalf = 0.5 * reach(s + u);
+    const innerHalf = 0.5 * reach(s + u, LINEAR);
     let inner = 0;
     for (let k = 0; k < ORDER; k++) {
       const t = innerHalf * (1 + nodes[k]);

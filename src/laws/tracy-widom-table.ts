@@ -8,9 +8,9 @@
  */
 import { fromSamples, type PiecewiseChebyshev, tabulationPoints } from "../approximation/piecewise.ts";
 import { airyExponent } from "../special/airy.ts";
+import { tracyWidomLeftTail } from "./hastings-mcleod.ts";
 import { type Beta, exactPoint, expMinusExponent, LEFT_SWITCH, RIGHT_SWITCH } from "./tracy-widom-exact.ts";
 import { scaledRightTail } from "./tracy-widom-far.ts";
-import { tracyWidomLeftTail } from "./hastings-mcleod.ts";
 
 /** The six pointwise functions of one law, in the unscaled variable. */
 export interface PointwiseLaw {
@@ -60,7 +60,8 @@ export function tabulatedTracyWidom(beta: Beta): PointwiseLaw {
 
   const law: PointwiseLaw = {
     cdf(s) {
-      if (s < start) return s === Number.NEGATIVE_INFINITY ? 0 : Math.exp(tracyWidomLeftTail(leftName, s).logCdf);
+      if (s < start)
+        return s === Number.NEGATIVE_INFINITY ? 0 : Math.exp(tracyWidomLeftTail(leftName, s).logCdf);
       const t = tableOf();
       if (s >= t.end) return 1;
       const piece = t.probability.locate(s);
@@ -69,9 +70,11 @@ export function tabulatedTracyWidom(beta: Beta): PointwiseLaw {
       return piece < t.firstScaled ? 1 - value : 1 - value * expMinusExponent(kappa, s);
     },
     survival(s) {
-      if (s < start) return s === Number.NEGATIVE_INFINITY ? 1 : 1 - Math.exp(tracyWidomLeftTail(leftName, s).logCdf);
+      if (s < start)
+        return s === Number.NEGATIVE_INFINITY ? 1 : 1 - Math.exp(tracyWidomLeftTail(leftName, s).logCdf);
       const t = tableOf();
-      if (s >= t.end) return s === Number.POSITIVE_INFINITY ? 0 : far(s).survival * expMinusExponent(kappa, s);
+      if (s >= t.end)
+        return s === Number.POSITIVE_INFINITY ? 0 : far(s).survival * expMinusExponent(kappa, s);
       const piece = t.probability.locate(s);
       const value = t.probability.evaluateOn(piece, s);
       if (piece < t.firstUpper) return 1 - value;
@@ -94,7 +97,9 @@ export function tabulatedTracyWidom(beta: Beta): PointwiseLaw {
       const t = tableOf();
       if (s >= t.end) return -law.survival(s);
       const piece = t.probability.locate(s);
-      return piece < t.firstUpper ? Math.log(t.probability.evaluateOn(piece, s)) : Math.log1p(-law.survival(s));
+      return piece < t.firstUpper
+        ? Math.log(t.probability.evaluateOn(piece, s))
+        : Math.log1p(-law.survival(s));
     },
     logSurvival(s) {
       if (s < start) return Math.log1p(-law.cdf(s));

@@ -60,9 +60,27 @@ export function tracyWidom(beta: Beta, options: TracyWidomOptions = {}): Law {
 }
 
 const ACCURACY: Readonly<Record<Beta, LawAccuracy>> = {
-  1: { cdfAbsolute: 5e-16, cdfRelative: 2e-13, survivalRelative: 2e-14, pdfAbsolute: 5e-15, quantileAbsolute: 1e-13 },
-  2: { cdfAbsolute: 5e-16, cdfRelative: 2e-13, survivalRelative: 2e-14, pdfAbsolute: 5e-15, quantileAbsolute: 1e-13 },
-  4: { cdfAbsolute: 5e-16, cdfRelative: 2e-13, survivalRelative: 2e-14, pdfAbsolute: 5e-15, quantileAbsolute: 1e-13 },
+  1: {
+    cdfAbsolute: 5e-16,
+    cdfRelative: 2e-13,
+    survivalRelative: 2e-14,
+    pdfAbsolute: 5e-15,
+    quantileAbsolute: 1e-13,
+  },
+  2: {
+    cdfAbsolute: 5e-16,
+    cdfRelative: 2e-13,
+    survivalRelative: 2e-14,
+    pdfAbsolute: 5e-15,
+    quantileAbsolute: 1e-13,
+  },
+  4: {
+    cdfAbsolute: 5e-16,
+    cdfRelative: 2e-13,
+    survivalRelative: 2e-14,
+    pdfAbsolute: 5e-15,
+    quantileAbsolute: 1e-13,
+  },
 };
 
 interface Description {
@@ -79,7 +97,8 @@ const REAL: Description = {
   symbol: "F1",
   provenance: {
     formula: "F1(s) = det(I − V) on (s, ∞), V(x, y) = ½ Ai((x + y)/2)",
-    source: "P. Ferrari, H. Spohn, J. Phys. A 38 (2005) L557; C. Tracy, H. Widom, Commun. Math. Phys. 177 (1996) 727",
+    source:
+      "P. Ferrari, H. Spohn, J. Phys. A 38 (2005) L557; C. Tracy, H. Widom, Commun. Math. Phys. 177 (1996) 727",
     convention: "soft edge of the real (β = 1) ensembles, one scaling in use; mean −1.20653…",
   },
   centre: -1.2,
@@ -106,7 +125,8 @@ function quaternion(scaling: string, symbol: string, sentence: string): Descript
     symbol,
     provenance: {
       formula: "G(s) = ½ (det(I − V) + det(I + V)) on (s, ∞), V(x, y) = ½ Ai((x + y)/2)",
-      source: "P. Ferrari, H. Spohn, J. Phys. A 38 (2005) L557; C. Tracy, H. Widom, Commun. Math. Phys. 177 (1996) 727",
+      source:
+        "P. Ferrari, H. Spohn, J. Phys. A 38 (2005) L557; C. Tracy, H. Widom, Commun. Math. Phys. 177 (1996) 727",
       convention: sentence,
     },
     centre: -3.26,
@@ -118,7 +138,10 @@ function quaternion(scaling: string, symbol: string, sentence: string): Descript
 const realLaw = once(() => completeLaw(coreOf(1, REAL)));
 const complexLaw = once(() => completeLaw(coreOf(2, COMPLEX)));
 const unscaledCore = once(() =>
-  coreOf(4, quaternion("unscaled", "F4 (unscaled)", "β = 4 unscaled: F(s) = ½ (F1(s) + F2(s)/F1(s)); mean −3.26242…")),
+  coreOf(
+    4,
+    quaternion("unscaled", "F4 (unscaled)", "β = 4 unscaled: F(s) = ½ (F1(s) + F2(s)/F1(s)); mean −3.26242…"),
+  ),
 );
 const unscaledLaw = once(() => completeLaw(unscaledCore()));
 const standardLaw = once(() =>
@@ -127,7 +150,11 @@ const standardLaw = once(() =>
       unscaledCore(),
       // √2 as a double and what is missing from it.
       [Math.SQRT2, -9.667293313452913e-17],
-      quaternion("standard", "F4", "β = 4 standard: F(x) = ½ (F1 + F2/F1)(√2 x), the usual moment tables; mean −2.30688…"),
+      quaternion(
+        "standard",
+        "F4",
+        "β = 4 standard: F(x) = ½ (F1 + F2/F1)(√2 x), the usual moment tables; mean −2.30688…",
+      ),
     ),
   ),
 );
@@ -217,7 +244,8 @@ function rescaled(core: LawCore, factor: readonly [number, number], about: Descr
     exact(what, x, options) {
       const [h] = argument(x);
       const found = core.exact(what, h, options);
-      if (what === "pdf") return { ...found, value: head * found.value, error: head * found.error * (1 + 2 ** -51) };
+      if (what === "pdf")
+        return { ...found, value: head * found.value, error: head * found.error * (1 + 2 ** -51) };
       if (what === "logPdf") return { ...found, value: found.value + Math.log(head) };
       return found;
     },

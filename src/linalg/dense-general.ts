@@ -51,7 +51,12 @@ export function eliminateDenseUnpivoted(
  *
  * Cost: n³/3 multiply–adds. A zero pivot gives e = 1 there (determinant 0).
  */
-export function eliminateDensePivoted(matrix: Float64Array, e: Float64Array, n: number, stride: number): boolean {
+export function eliminateDensePivoted(
+  matrix: Float64Array,
+  e: Float64Array,
+  n: number,
+  stride: number,
+): boolean {
   for (let i = 0; i < n; i++) {
     for (let j = 0; j < n; j++) matrix[i * stride + j] = (i === j ? 1 : 0) - matrix[i * stride + j];
   }

@@ -57,9 +57,25 @@ export function summarizePivots(e: Float64Array, count: number, flipped = false)
   if (carried === 0) {
     const nearOne = Math.abs(complement) < 0.5;
     const logAbs = nearOne ? Math.log1p(-complement) : Math.log(Math.abs(product));
-    return { value: product, complement, logAbs, sign: Math.sign(product), smallestPivot: smallest, largestPivot: largest };
+    // Away from 1 the product has fewer roundings behind it than the sum.
+    if (!nearOne) complement = 1 - product;
+    return {
+      value: product,
+      complement,
+      logAbs,
+      sign: Math.sign(product),
+      smallestPivot: smallest,
+      largestPivot: largest,
+    };
   }
   const logAbs = carried + Math.log(Math.abs(product));
   const value = Math.sign(product) * Math.exp(logAbs);
-  return { value, complement: 1 - value, logAbs, sign: Math.sign(product), smallestPivot: smallest, largestPivot: largest };
+  return {
+    value,
+    complement: 1 - value,
+    logAbs,
+    sign: Math.sign(product),
+    smallestPivot: smallest,
+    largestPivot: largest,
+  };
 }

@@ -26,15 +26,16 @@ export function fillPanels(
   let at = 0;
   for (const { lower, upper, mapped } of panels) {
     const half = 0.5 * (upper - lower);
-    const middle = lower + half;
     for (let i = 0; i < order; i++, at++) {
-      const t = rule.nodes[i];
+      // Measured from the nearer end, by its exact distance: a far-away middle would cost digits.
+      const d = rule.distances[i];
+      const below = rule.nodes[i] < 0;
       if (mapped) {
-        const away = 1 - t;
-        nodes[at] = lower + ((upper - lower) * (1 + t)) / away;
+        const away = below ? 2 - d : d; // 1 − t
+        nodes[at] = lower + ((upper - lower) * (2 - away)) / away;
         weights[at] = (rule.weights[i] * 2 * (upper - lower)) / (away * away);
       } else {
-        nodes[at] = middle + half * t;
+        nodes[at] = below ? lower + half * d : upper - half * d;
         weights[at] = half * rule.weights[i];
       }
     }

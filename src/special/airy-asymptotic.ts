@@ -1,15 +1,17 @@
 /**
- * Airy functions for |x| > 20 by their asymptotic series (DLMF 9.7.5, 9.7.6, 9.7.9, 9.7.10), v = 1/ζ, ζ = (2/3)|x|^{3/2}:
+ * Airy functions for |x| > 20 by their asymptotic series in 1/ζ, ζ = (2/3)|x|^{3/2}
+ * (DLMF 9.7.5, 9.7.6, 9.7.9, 9.7.10):
  *
- *   x > 0:  e^{ζ} Ai(x)   =  x^{−1/4} / (2√π) · Σ (−1)^k u_k v^k
- *           e^{ζ} Ai'(x)  = −x^{1/4}  / (2√π) · Σ (−1)^k v_k v^k
- *           e^{ζ} ∫_x^∞ Ai = x^{−3/4} / (2√π) · Σ (−1)^k w_k v^k
- *   x = −z < 0, with P = Σ (−1)^k u_{2k} v^{2k}, Q = Σ (−1)^k u_{2k+1} v^{2k+1}:
+ *   x > 0:  e^{ζ} Ai(x)   =  x^{−1/4} / (2√π) · Σ (−1)^k u_k ζ^{−k}
+ *           e^{ζ} Ai'(x)  = −x^{1/4}  / (2√π) · Σ (−1)^k v_k ζ^{−k}
+ *           e^{ζ} ∫_x^∞ Ai = x^{−3/4} / (2√π) · Σ (−1)^k w_k ζ^{−k}
+ *   x = −z < 0, with P = Σ (−1)^k u_{2k} ζ^{−2k}, Q = Σ (−1)^k u_{2k+1} ζ^{−2k−1}:
  *           Ai(−z)  = z^{−1/4} / √(2π) · ((P − Q) cos ζ + (P + Q) sin ζ)
  *           Ai'(−z) = z^{1/4}  / √(2π) · ((P − Q) sin ζ − (P + Q) cos ζ)      (P, Q from v_k)
  *           ∫_{−∞}^{−z} Ai = z^{−3/4} / √(2π) · ((P + Q) cos ζ + (Q − P) sin ζ)   (P, Q from w_k)
  *
- * the usual cos(ζ ∓ π/4) written out, so that no phase is shifted. w_k follows from w′ = −Ai: w_k = u_k + (k − ½) w_{k−1}.
+ * the usual cos(ζ ∓ π/4) written out, so that no phase is shifted. The integral's own equation
+ * gives w_k = u_k + (k − ½) w_{k−1}.
  * At ζ(20) = 59.6 the first terms left out are 8e-21 (u_14), 9e-21 (v_14), 1.4e-19 (w_22).
  */
 import { InvalidArgumentError } from "../core/errors.ts";

@@ -26,11 +26,13 @@ import { centre, nearestCentre, TABLE_LIMIT, taylorAi, taylorAiPrime, taylorTabl
  * Airy function Ai(x), the solution of w″ = x w that decays as x → +∞.
  *
  * @param x - Real. NaN passes through; Ai(±∞) = 0.
- * @returns Ai(x); 0 where it underflows (x > 107.7), with fewer digits from 103.7 where it is subnormal.
+ * @returns Ai(x); 0 where it underflows (x > 107.4), with fewer digits from 103.9 on, where it is subnormal.
  * @throws {@link InvalidArgumentError} for finite x < −1e10, where the phase has lost all digits.
  *
- * **Error.** @@AI@@
- * **Cost.** About 15 ns for |x| ≤ 20, 100 ns outside.
+ * **Error.** Estimate: the largest found against mpmath at 60 000 points. Relative for x ≥ 0: 3.2e-16 on [0, 20],
+ * 4.9e-16 on [20, 103.8]; relative to the modulus √(Ai² + Bi²) for x < 0: 1.7e-16 on [−20, 0], 4.7e-16 on [−50, −20].
+ * Tests hold 6e-16 on [−1e10, 103.5].
+ * **Cost.** About 14 ns for |x| ≤ 20, 35 ns beyond 20, 60–110 ns below −20. The first call builds a table (2 ms).
  * **Source.** DLMF 9.2, 9.7.
  *
  * @example
@@ -54,10 +56,11 @@ export function airyAi(x: number): number {
  * Derivative Ai'(x) of the Airy function.
  *
  * @param x - Real. NaN passes through; Ai'(+∞) = 0.
- * @returns Ai'(x); 0 where it underflows (x > 107.7).
+ * @returns Ai'(x); 0 where it underflows (x > 107.7), subnormal from 104.1.
  * @throws {@link InvalidArgumentError} for x < −1e10, −∞ included: there is no limit.
  *
- * **Error.** @@AIP@@
+ * **Error.** As {@link airyAi}, to the modulus √(Ai'² + Bi'²) for x < 0: 4.5e-16 on [0, 20], 4.4e-16 on [20, 104],
+ * 1.9e-16 on [−20, 0], 5.5e-16 on [−50, −20].
  * **Cost, source.** As {@link airyAi}.
  *
  * @example
@@ -120,7 +123,7 @@ export function airyPairInto(x: Float64Array, ai: Float64Array, aiPrime: Float64
  * @returns A number that neither underflows nor overflows at any large x.
  * @throws {@link InvalidArgumentError} for finite x < −1e10.
  *
- * **Error.** @@AIS@@
+ * **Error.** Estimate, relative, x ≥ 0: 5.2e-16 found on [0, 20], 3.7e-16 beyond. Below 0 as {@link airyAi}.
  *
  * @category Special functions
  * @since 0.1.0
@@ -136,7 +139,7 @@ export function airyAiScaled(x: number): number {
  * @param x - Real. NaN passes through; the limit at +∞ is −∞ (it grows like −x^{1/4} / (2√π)).
  * @throws {@link InvalidArgumentError} for x < −1e10.
  *
- * **Error.** @@AIPS@@
+ * **Error.** Estimate, relative, x ≥ 0: 5.5e-16 found on [0, 20], 3.6e-16 beyond. Below 0 as {@link airyAiPrime}.
  *
  * @category Special functions
  * @since 0.1.0

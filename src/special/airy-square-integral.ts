@@ -70,14 +70,15 @@ function squareRatio(x: number): number {
  * Integral of Ai² from x to +∞, the diagonal Ai'(x)² − x Ai(x)² of the Airy kernel.
  *
  * @param x - Real. NaN passes through; 0 at +∞, +∞ at −∞.
- * @returns A number ≥ 0, decreasing in x, about √(−x)/π for x ≪ 0; 0 where it underflows (x > 67).
+ * @returns A number ≥ 0, decreasing in x, about √(−x)/π for x ≪ 0; 0 where it underflows (x > 67.3), subnormal from 65.1.
  * @throws {@link InvalidArgumentError} for finite x < −1e10, where the phase of Ai has lost all digits.
  *
- * **Error.** @@SQ@@
+ * **Error.** Estimate, relative, the largest found against mpmath at 60 000 points: 7.7e-16 on [0, 20], 1.2e-15 on
+ * [20, 65] and [−50, −20], 4.6e-16 on [−20, 0]. Tests hold 1.5e-15 on [−1e10, 65].
  * **Source.** C. Tracy, H. Widom, Commun. Math. Phys. 159 (1994) 151.
  *
  * @example
- * airySquareIntegral(0); // 0.06698748377966398
+ * airySquareIntegral(0); // 0.06698748377966397
  *
  * @category Special functions
  * @since 0.1.0
@@ -96,7 +97,7 @@ export function airySquareIntegral(x: number): number {
  * @param aiPrime - Ai'(x); read for x < 0 only.
  * @returns The same bits as `airySquareIntegral(x)`. With scaled `ai`, x ≥ 0: the scaled integral.
  *
- * **Cost.** 2 ns for x < 0, about 10 ns for x ≥ 0; no allocation, no checks.
+ * **Cost.** 5 ns for x < 0, about 15 ns on [0, 20], 33 ns beyond; no allocation, no checks.
  *
  * @category Special functions
  * @since 0.1.0
@@ -111,7 +112,7 @@ export function airySquareIntegralFrom(x: number, ai: number, aiPrime: number): 
  * @param x - Real. NaN passes through; the limit at +∞ is 0.
  * @throws {@link InvalidArgumentError} for finite x < −1e10.
  *
- * **Error.** @@SQS@@
+ * **Error.** Estimate, relative, x ≥ 0: 1.1e-15 found on [0, 20], 1e-15 beyond.
  *
  * @category Special functions
  * @since 0.1.0

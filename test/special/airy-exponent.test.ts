@@ -2,6 +2,7 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { airyExponent } from "../../src/special/airy.ts";
 import { exactParts } from "./airy-reference.ts";
+import { uniform } from "./uniform.ts";
 
 /** 9 (head + tail)² / (4 x³) − 1 by integer arithmetic: twice the relative error of the exponent. */
 function squaredError(x: number): number {
@@ -21,7 +22,8 @@ function squaredError(x: number): number {
 describe("airyExponent", () => {
   it("is (2/3) x^{3/2} to 2^-100, by exact arithmetic", () => {
     fc.assert(
-      fc.property(fc.double({ min: 1e-6, max: 1e6, noNaN: true }), (x) => {
+      fc.property(uniform(-20, 20), (power) => {
+        const x = 2 ** power;
         expect(Math.abs(squaredError(x))).toBeLessThanOrEqual(2 ** -99);
         const [head, tail] = airyExponent(x);
         expect(Math.abs(tail)).toBeLessThanOrEqual(2 ** -51 * head);
@@ -34,7 +36,7 @@ describe("airyExponent", () => {
 
   it("makes exp(−ζ) good to the last place at ζ = 667 where the head alone is not", () => {
     // e^{−2000/3} = 2.95355728026610045e-290 (mpmath 1.3, 40 digits).
-    const expected = 2.95355728026610045e-290;
+    const expected = Number("2.95355728026610045e-290");
     const [head, tail] = airyExponent(100);
     expect(Math.abs((Math.exp(-head) * (1 - tail)) / expected - 1)).toBeLessThan(4e-16);
     expect(Math.abs(Math.exp(-head) / expected - 1)).toBeGreaterThan(1e-15);

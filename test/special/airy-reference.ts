@@ -52,14 +52,15 @@ export function relativeError(value: number, reference: string): number {
   return Number(((received - expected) << 160n) / size) / 2 ** 160;
 }
 
-/** The largest |error| of `compute` over the rows that have the column, relative to `scale`, and where. */
+/** The largest and the root-mean-square |error| of `compute` over the rows that have the column, relative to `scale`, and where. */
 export function worstError(
   rows: readonly AiryReferenceRow[],
   column: AiryColumn,
   compute: (x: number) => number,
   scale: (row: AiryReferenceRow, reference: number) => number = (_row, reference) => Math.abs(reference),
-): { worst: number; at: number; count: number } {
+): { worst: number; at: number; rms: number; count: number } {
   let worst = 0;
+  let squares = 0;
   let at = Number.NaN;
   let count = 0;
   for (const row of rows) {
@@ -68,10 +69,11 @@ export function worstError(
     count += 1;
     const size = Math.abs(Number(reference));
     const error = Math.abs(relativeError(compute(row.x), reference)) * (size / scale(row, size));
+    squares += error * error;
     if (!(error <= worst)) {
       worst = error;
       at = row.x;
     }
   }
-  return { worst, at, count };
+  return { worst, at, rms: Math.sqrt(squares / count), count };
 }

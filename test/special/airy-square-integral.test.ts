@@ -13,6 +13,7 @@ import {
 } from "../../src/special/airy.ts";
 import { airyReference, worstError } from "./airy-reference.ts";
 import { integrate } from "./gauss-rule.ts";
+import { uniform } from "./uniform.ts";
 
 const rows = airyReference();
 const normal = rows.filter((r) => r.square !== undefined && Number(r.square) >= 2.3e-308);
@@ -56,40 +57,32 @@ describe("∫_x^∞ Ai²", () => {
 
   it("its differences are integrals of Ai² by Gauss–Legendre, across every switch", () => {
     fc.assert(
-      fc.property(
-        fc.double({ min: -50, max: 60, noNaN: true }),
-        fc.double({ min: 0.01, max: 0.2 }),
-        (x, width) => {
-          const integral = integrate((t) => airyAi(t) ** 2, x, x + width);
-          const error = Math.abs(airySquareIntegral(x) - airySquareIntegral(x + width) - integral);
-          const moved = airyAi(x) ** 2 * 2 ** -52 * Math.abs(x);
-          expect(error).toBeLessThanOrEqual(3e-15 * airySquareIntegral(x) + moved);
-        },
-      ),
+      fc.property(uniform(-50, 60), uniform(0.01, 0.2), (x, width) => {
+        const integral = integrate((t) => airyAi(t) ** 2, x, x + width);
+        const error = Math.abs(airySquareIntegral(x) - airySquareIntegral(x + width) - integral);
+        const moved = airyAi(x) ** 2 * 2 ** -52 * Math.abs(x);
+        expect(error).toBeLessThanOrEqual(3e-15 * airySquareIntegral(x) + moved);
+      }),
       { seed: 20261201, numRuns: 2000 },
     );
   });
 
   it("decreases everywhere, and 2√x D(x) < Ai(x)² for x > 0", () => {
     fc.assert(
-      fc.property(
-        fc.double({ min: -100, max: 64, noNaN: true }),
-        fc.double({ min: 0, max: 1 }),
-        (x, step) => {
-          const value = airySquareIntegral(x);
-          expect(value).toBeGreaterThan(0);
-          expect(airySquareIntegral(x + step)).toBeLessThanOrEqual(value * (1 + 2e-15));
-          // −Ai'/Ai − √t > 0 decreases, so Ai² = −∫ 2 Ai Ai' > 2 ∫ √t Ai² > 2 √x D.
-          if (x > 0) expect(2 * Math.sqrt(x) * value).toBeLessThan(airyAi(x) ** 2 * (1 + 2e-15));
-        },
-      ),
+      fc.property(uniform(-100, 64), uniform(0, 1), (x, step) => {
+        const value = airySquareIntegral(x);
+        expect(value).toBeGreaterThan(0);
+        expect(airySquareIntegral(x + step)).toBeLessThanOrEqual(value * (1 + 2e-15));
+        // −Ai'/Ai − √t > 0 decreases, so Ai² = −∫ 2 Ai Ai' > 2 ∫ √t Ai² > 2 √x D.
+        if (x > 0) expect(2 * Math.sqrt(x) * value).toBeLessThan(airyAi(x) ** 2 * (1 + 2e-15));
+      }),
       { seed: 20261201, numRuns: 2000 },
     );
   });
 
   it("scaled = plain · e^{2ζ}", () => {
     fc.assert(
-      fc.property(fc.double({ min: 0, max: 64, noNaN: true }), (x) => {
+      fc.property(uniform(0, 64), (x) => {
         const [head, tail] = airyExponent(x);
         const factor = Math.exp(-head) * (1 - tail);
         expect(
