@@ -62,7 +62,8 @@ function violations(path: string, text: string, dependencies: readonly string[])
   const isBarrel = parts[parts.length - 1] === "index.ts";
   const out: string[] = [];
   if (room !== undefined && !ROOMS.includes(room)) out.push(`${path}: no room is called ${room}`);
-  if (room === undefined && path !== "src/index.ts") out.push(`${path}: only the barrel lies outside the rooms`);
+  if (room === undefined && path !== "src/index.ts")
+    out.push(`${path}: only the barrel lies outside the rooms`);
   for (const { specifier, line } of references(path, text)) {
     const where = `${path}:${line}: ${specifier}`;
     if (specifier === "(computed)") out.push(`${where}: a computed import cannot be checked`);
@@ -90,7 +91,8 @@ function violations(path: string, text: string, dependencies: readonly string[])
       const outside = ["process", "Date", "console", "performance"];
       if (outside.includes(node.text) && room !== "cli") out.push(`${path}: ${node.text} belongs to cli`);
     }
-    if (ts.isPropertyAccessExpression(node) && node.getText() === "Math.random") out.push(`${path}: Math.random`);
+    if (ts.isPropertyAccessExpression(node) && node.getText() === "Math.random")
+      out.push(`${path}: Math.random`);
     ts.forEachChild(node, visit);
   };
   visit(code);
@@ -124,7 +126,9 @@ describe("architecture", () => {
   });
 
   it("imports only upwards, files not barrels, and touches the machine only in cli", () => {
-    const found = sources.flatMap((path) => violations(path, readFileSync(join(ROOT, path), "utf8"), dependencies));
+    const found = sources.flatMap((path) =>
+      violations(path, readFileSync(join(ROOT, path), "utf8"), dependencies),
+    );
     expect(found).toEqual([]);
   });
 
@@ -142,7 +146,9 @@ describe("architecture", () => {
     expect(bad("src/laws/a.ts", "const x = Math.random();")).toContain("Math.random");
     expect(bad("src/laws/a.ts", "const x = new Date();")).toContain("Date");
     expect(bad("src/odd/a.ts", "export {};")).toContain("no room");
-    expect(bad("src/laws/a.ts", 'import { Matrix } from "ml-matrix"; import { x } from "../core/c.ts";')).toBe("");
+    expect(
+      bad("src/laws/a.ts", 'import { Matrix } from "ml-matrix"; import { x } from "../core/c.ts";'),
+    ).toBe("");
   });
 
   it("pins every dependency exactly", () => {

@@ -119,17 +119,18 @@ function peak(size: number, normal: () => number): number {
   return (high - edge) * Math.SQRT2 * size ** (1 / 6);
 }
 
-function csv(header: readonly string[], rows: readonly (readonly number[])[], digits: number): string {
-  return (
-    [header.join(","), ...rows.map((row) => row.map((x) => x.toFixed(digits)).join(","))].join("\n") + "\n"
-  );
+function csv(header: readonly string[], rows: readonly (readonly string[])[]): string {
+  return `${[header, ...rows].map((row) => row.join(",")).join("\n")}\n`;
 }
 
-function sensorNames(suffixes: readonly string[]): string[] {
-  return Array.from(
-    { length: DEMO_TRUTH.sensors },
-    (_, j) => `sensor_${String(j + 1).padStart(2, "0")}`,
-  ).flatMap((name) => suffixes.map((suffix) => name + suffix));
+function sensorNames(): string[] {
+  return Array.from({ length: DEMO_TRUTH.sensors }, (_, j) => `sensor_${String(j + 1).padStart(2, "0")}`);
+}
+
+/** A complex number as the CSV reader takes it: `0.123-1.456i`. */
+function complexCell([re, im]: readonly [number, number]): string {
+  const imaginary = im.toFixed(3);
+  return `${re.toFixed(3)}${imaginary.startsWith("-") ? "" : "+"}${imaginary}i`;
 }
 
 /**
@@ -138,15 +139,20 @@ function sensorNames(suffixes: readonly string[]): string[] {
  * @returns File names with their text.
  */
 export function demoFiles(): Record<string, string> {
-  const realRows = snapshots(SEED, SOURCES, true).map((row) => row.map(([re]) => re));
-  const noiseRows = snapshots(SEED + 1, [], true).map((row) => row.map(([re]) => re));
-  const complexRows = snapshots(SEED + 2, SOURCES, false).map((row) => row.flat());
+  const real = (seed: number, sources: typeof SOURCES | readonly []): string =>
+    csv(
+      sensorNames(),
+      snapshots(seed, sources, true).map((row) => row.map(([re]) => re.toFixed(3))),
+    );
   const normal = normalGenerator(seededGenerator(SEED + 3));
-  const peaks = Array.from({ length: DEMO_TRUTH.peaks }, () => [peak(PEAK_SIZE, normal)]);
+  const peaks = Array.from({ length: DEMO_TRUTH.peaks }, () => [peak(PEAK_SIZE, normal).toFixed(4)]);
   return {
-    "array-real.csv": csv(sensorNames([""]), realRows, 3),
-    "array-complex.csv": csv(sensorNames(["_re", "_im"]), complexRows, 3),
-    "noise-only.csv": csv(sensorNames([""]), noiseRows, 3),
-    "peaks.csv": csv(["peak"], peaks, 4),
+    "array-real.csv": real(SEED, SOURCES),
+    "array-complex.csv": csv(
+      sensorNames(),
+      snapshots(SEED + 2, SOURCES, false).map((row) => row.map(complexCell)),
+    ),
+    "noise-only.csv": real(SEED + 1, []),
+    "peaks.csv": csv(["peak"], peaks),
   };
 }

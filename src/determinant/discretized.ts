@@ -47,6 +47,7 @@ interface Scene {
   readonly pivots: number;
   readonly rows: number;
   readonly offset: number; // largest |node| over the panel lengths, when the panel sits far from the origin
+  readonly nodeRoundings: number; // how many roundings a node has behind it
 }
 
 /**
@@ -71,7 +72,16 @@ export function discretizedDeterminant(
     nodes[pivots] = extra;
     roots[pivots] = 1;
   }
-  const scene: Scene = { kernel, z, nodes, roots, pivots, rows, offset: farOffset(panels) };
+  const scene: Scene = {
+    kernel,
+    z,
+    nodes,
+    roots,
+    pivots,
+    rows,
+    offset: farOffset(panels),
+    nodeRoundings: panels.some((panel) => panel.mapped) ? 4 : 1,
+  };
   if (kernel.kind === "smooth") return smoothDeterminant(scene, kernel);
   return kernel.antisymmetricPair ? pairDeterminant(scene, kernel) : generalDeterminant(scene, kernel);
 }
@@ -113,7 +123,7 @@ function pairDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
   const least = positive ? leastPivot(size) : 1e-3;
   const done = eliminateStructuredSymmetric(nodes, a, b, e, pivots, rows, least);
   if (done === pivots) return withNoise(scene, summarizePivots(e, pivots), e, size, kernel.evaluationError);
-  if (positive) return exhausted(scene, e, done, least);
+  if (positive) return exhausted(scene, size, summarizePivots(e, done).largestPivot, least);
   // Not positive definite: nothing guards the pivots in their natural order, so the matrix is formed and exchanged.
   return denseDeterminant(scene, formMatrix(scene, kernel), true, size, kernel.evaluationError);
 }
@@ -265,7 +275,7 @@ function denseDeterminant(
     const least = within ? leastPivot(size) : 1e-3;
     const done = eliminateDenseSymmetric(matrix, e, new Float64Array(rows), pivots, rows, rows, least);
     if (done === pivots) return withNoise(scene, summarizePivots(e, pivots), e, size, evaluationError);
-    if (within) return exhausted(scene, e, done, least);
+    if (within) return exhausted(scene, size, summarizePivots(e, done).largestPivot, least);
   } else {
     const done = eliminateDenseUnpivoted(matrix, e, pivots, rows, rows, 0.25);
     if (done === pivots) return withNoise(scene, summarizePivots(e, pivots), e, size, evaluationError);
@@ -322,7 +332,7 @@ function withNoise(
   const smallest = Math.max(summary.smallestPivot, EPS);
   // Independent errors of the diagonal add in squares; a common factor (a rounded constant in the kernel) does not.
   const trace =
-    COMMON_FACTOR * EPS * (size.trace + size.slope) +
+    COMMON_FACTOR * EPS * (size.trace + scene.nodeRoundings * size.slope) +
     INDEPENDENT_FACTOR * evaluationError * Math.sqrt(size.diagonal);
   const relative = trace + (Math.min(norm, 1 + norm * smallest) * entries) / smallest + SHIFT_FACTOR * shift;
   const logNoise = relative + EPS * (Math.abs(summary.logAbs) + Math.sqrt(pivots));
@@ -342,20 +352,19 @@ function withNoise(
 }
 
 /**
- * A contraction whose next pivot is all rounding. I − zA is then positive: by Hadamard's inequality the determinant of
- * what remains lies between 0 and the product of its diagonal.
+ * A contraction whose next pivot is all rounding. I − zA is then positive with eigenvalues at most 2, and the
+ * elimination after such a pivot would be noise multiplied. What stands: a determinant of this size, its error that of
+ * the matrix in the trace norm.
  */
-function exhausted(scene: Scene, e: Float64Array, done: number, least: number): Discretized {
-  const before = summarizePivots(e, done);
-  let bound = Math.max(0, before.value) * 8 * least;
-  for (let i = done + 1; i < scene.pivots; i++) bound *= Math.max(8 * least, 1 - e[i]);
+function exhausted(scene: Scene, size: Size, largestPivot: number, least: number): Discretized {
+  const bound = 2 * least * (1 + size.trace);
   return {
     value: 0,
     complement: 1,
     logAbs: Number.NEGATIVE_INFINITY,
     sign: 0,
     smallestPivot: 0,
-    largestPivot: before.largestPivot,
+    largestPivot,
     noise: bound,
     complementNoise: bound,
     logNoise: Number.POSITIVE_INFINITY,

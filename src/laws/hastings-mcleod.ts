@@ -11,8 +11,8 @@
  * method; then q and q² are integrated from the right, so that nothing cancels.
  */
 import { LuDecomposition, Matrix } from "ml-matrix";
-import { antiderivative, atLeft, atRight } from "../approximation/chebyshev-calculus.ts";
 import { chebyshevCoefficients, chebyshevPoints, clenshaw } from "../approximation/chebyshev.ts";
+import { antiderivative, atLeft, atRight } from "../approximation/chebyshev-calculus.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
 import { airyAi, airyAiIntegral, airySquareIntegral } from "../special/airy.ts";
 import { type PainleveValues, painleveSeries } from "./hastings-mcleod-series.ts";
@@ -175,7 +175,14 @@ function integrate(global: Float64Array): Panel[] {
     });
     const qc = chebyshevCoefficients(q, PANEL_POINTS - 1);
     const muc = fromRight(qc, half, mu);
-    const slopec = fromRight(chebyshevCoefficients(q.map((x) => x * x), PANEL_POINTS - 1), half, slope);
+    const slopec = fromRight(
+      chebyshevCoefficients(
+        q.map((x) => x * x),
+        PANEL_POINTS - 1,
+      ),
+      half,
+      slope,
+    );
     const logc = fromRight(slopec, half, minusLog);
     mu = atLeft(muc);
     slope = atLeft(slopec);

@@ -60,6 +60,7 @@ function displayCell(column: TableColumn, cell: Cell, digits: number): string[] 
         : formatError(cell.error);
     return [cell.converged === false ? `${text} ${MISSED}` : text, error];
   }
+  if (column.kind === "plain" && typeof cell === "number") return [formatValue(cell, 0, digits)];
   const text = typeof cell === "number" ? fullDigits(cell) : plainText(cell);
   return hasError(column.kind) ? [text, ""] : [text];
 }
@@ -103,7 +104,10 @@ export function sourceLine(symbols: readonly string[], provenance: ReportProvena
   const parts = provenance.laws
     .filter((law) => symbols.includes(law.symbol))
     .map((law) => `${law.symbol} (${law.name}): ${law.convention}`);
-  return plainText([...parts, `edgelaw ${provenance.version}`].join(". ") + ".");
+  const sentences = [...parts, `edgelaw ${provenance.version}`].map((part) =>
+    /[.…]$/.test(part) ? part : `${part}.`,
+  );
+  return plainText(sentences.join(" "));
 }
 
 /**
@@ -115,6 +119,11 @@ export function tableNotes(table: TableBlock, document: ReportDocument): string[
     notes.push(
       `Values are rounded to at most ${table.digits ?? DEFAULT_DIGITS} significant digits and never to more than their error ` +
         "supports; the error is absolute and that of the value before rounding.",
+    );
+  }
+  if (table.columns.some((column) => column.kind === "plain")) {
+    notes.push(
+      "Columns without an error come from plain double-precision sums and carry rounding errors only.",
     );
   }
   if (table.rows.some((row) => row.some((cell) => isMeasured(cell) && cell.converged === false))) {

@@ -16,6 +16,8 @@ export type ColumnKind =
   | "integer"
   /** Numbers that the user or the data gave: printed as they are. */
   | "given"
+  /** Numbers from plain arithmetic on the data: rounded for people, with rounding errors only. */
+  | "plain"
   /** Computed numbers with an error; printed as two columns, value and error. */
   | "measured"
   /** Computed probabilities with an error; never printed as 0. */

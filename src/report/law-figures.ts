@@ -16,6 +16,12 @@ import { lawKey } from "./provenance.ts";
 export interface ObservedValue {
   readonly x: number;
   readonly label: string;
+  /** True to leave the label out of the drawing, where many would crowd it. */
+  readonly quiet?: boolean;
+}
+
+function drawnLabels(observed: readonly ObservedValue[]): string[] {
+  return observed.map((o) => (o.quiet === true ? "" : o.label));
 }
 
 const CURVE_POINTS = 241;
@@ -97,7 +103,7 @@ export function densityFigure(law: Law, observed: readonly ObservedValue[]): Fig
       kind: "sticks",
       name: "observed",
       at: shown.map((o) => o.x),
-      labels: shown.map((o) => o.label),
+      labels: drawnLabels(shown),
     });
   }
   const far = observed.filter((o) => beyond.includes(o.x));
@@ -159,7 +165,7 @@ export function tailFigure(law: Law, observed: readonly ObservedValue[], level =
   ];
   if (observed.length > 0) {
     const points = shown.map((o): [number, number] => [o.x, o.y]);
-    layers.push({ kind: "points", name: "observed", points, labels: shown.map((o) => o.label) });
+    layers.push({ kind: "points", name: "observed", points, labels: drawnLabels(shown) });
   }
   const left = observed.length - shown.length;
   return {

@@ -6,7 +6,7 @@
  * shortest decimal that reads back as the same double. A probability below the range of a double is written as
  * a decimal from its logarithm (it reads back as 0 in a double, and as itself in anything wider).
  */
-import { stringify } from "csv-stringify/sync";
+import { stringify } from "csv-stringify/browser/esm/sync";
 import { plainText } from "./cells.ts";
 import {
   type Cell,

@@ -15,4 +15,8 @@ export {
   airyPairScaled,
   airyPairScaledInto,
 } from "./airy-pair.ts";
-export { airySquareIntegral, airySquareIntegralFrom, airySquareIntegralScaled } from "./airy-square-integral.ts";
+export {
+  airySquareIntegral,
+  airySquareIntegralFrom,
+  airySquareIntegralScaled,
+} from "./airy-square-integral.ts";
