@@ -31,7 +31,7 @@ export function kolmogorovSurvival(n: number, d: number): Probability {
   if (n * d <= 0.5) return { value: 1, error: 0 };
   if (square >= 6 && n <= 1e6) {
     const value = Math.min(1, 2 * smirnovSurvival(n, d));
-    return { value, error: value * (1e-15 * n + 1e-12) };
+    return { value, error: value * (4e-15 * n + 1e-12) };
   }
   if (n <= MOST_EXACT) {
     const value = Math.max(0, 1 - durbinCdf(n, d));

@@ -17,7 +17,7 @@ table { border-collapse: collapse; font-variant-numeric: tabular-nums; font-size
 caption { text-align: left; font-weight: 600; padding-bottom: .5rem; }
 th, td { padding: .3rem .8rem; border-bottom: 1px solid var(--rule); text-align: right; white-space: nowrap; }
 thead th { border-bottom: 2px solid var(--soft); vertical-align: bottom; }
-.left { text-align: left; white-space: normal; overflow-wrap: anywhere; }
+.left { text-align: left; white-space: normal; overflow-wrap: break-word; max-width: 24rem; }
 th.error, td.error { color: var(--soft); font-weight: normal; font-size: .85em; padding-left: 0; }
 tbody th { font-weight: normal; }
 .small { color: var(--soft); font-size: .85rem; margin: .25rem 0; }

@@ -146,9 +146,7 @@ export function formatFromLog(logValue: number, logError = 0, digits: number = D
 
 /** Whether a probability is so small that it is printed from its logarithm. */
 export function printsFromLog(p: Measured): boolean {
-  const { value, logValue, logError } = p;
-  const known = logError === undefined || logError < 1;
-  return logValue !== undefined && Number.isFinite(logValue) && value < SMALLEST_TRUSTED && known;
+  return p.logValue !== undefined && Number.isFinite(p.logValue) && p.value < SMALLEST_TRUSTED;
 }
 
 /**
@@ -158,6 +156,7 @@ export function printsFromLog(p: Measured): boolean {
 export function formatErrorFromLog(logValue: number, logError: number | undefined): string {
   if (logError === undefined) return "";
   if (logError === 0) return "0";
+  if (!Number.isFinite(logError)) return "unbounded";
   const log10 = (logValue + Math.log(logError)) / Math.LN10;
   const exponent = Math.floor(log10);
   // One part in a thousand covers the rounding of the logarithms, so that the error is never understated.
@@ -174,7 +173,12 @@ export function formatErrorFromLog(logValue: number, logError: number | undefine
  */
 export function formatProbability(p: Measured, digits: number = DEFAULT_DIGITS): string {
   const { value, error = 0, logValue, logError } = p;
-  if (logValue !== undefined && printsFromLog(p)) return formatFromLog(logValue, logError, digits);
+  if (logValue !== undefined && printsFromLog(p)) {
+    if (logError === undefined || logError < 1) return formatFromLog(logValue, logError, digits);
+    // Not even the power of ten is known for certain: the bound is what can be said.
+    if (Number.isFinite(logError))
+      return `< 1e${Math.min(0, Math.ceil((logValue + logError) / Math.LN10 + 1e-9))}`;
+  }
   if (Number.isNaN(value) || !Number.isFinite(error)) return formatValue(value, error, digits);
   const text = formatValue(value, error, digits);
   if (text !== "0" && error < value) return text;

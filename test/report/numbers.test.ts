@@ -152,6 +152,16 @@ describe("probabilities", () => {
     expect(formatErrorFromLog(-900, 1e-9)).toBe("1.4e-400");
     expect(formatErrorFromLog(-900, 0)).toBe("0");
     expect(formatErrorFromLog(-900, undefined)).toBe("");
+    expect(formatErrorFromLog(-900, Number.POSITIVE_INFINITY)).toBe("unbounded");
+  });
+
+  it("is a bound where the logarithm is known to no better than 1", () => {
+    expect(
+      formatProbability({ value: 0, error: 5e-324, logValue: -1e6 * Math.LN10, logError: 4 * Math.LN10 }),
+    ).toBe("< 1e-999995");
+    expect(
+      formatProbability({ value: 0, error: 0, logValue: -800, logError: Number.POSITIVE_INFINITY }),
+    ).toMatch(/^< /);
   });
 
   it("agrees with the direct route where both exist", () => {
