@@ -37,7 +37,7 @@ edgelaw(...peaks, "--output", "demo-report/peaks.html");
 console.log(`The truth that was put into the data (docs/demo/sensor-array.ts):
   array-real.csv, array-complex.csv   3 sources, one strong and two weak
   noise-only.csv                      no source
-  peaks.csv                           300 values that follow F2
+  peaks.csv                           300 largest eigenvalues of Gaussian matrices, nearly F2
 
 Reports to open in a browser:
   demo-report/report.html       the real snapshots, the table above with its figures

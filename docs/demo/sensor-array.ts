@@ -19,7 +19,7 @@ export const DEMO_TRUTH = {
   sources: 3,
   /** Sources in the file with noise only. */
   sourcesInNoise: 0,
-  /** Law of the peak readings. */
+  /** Limit law of the peak readings, which are largest eigenvalues of finite matrices. */
   peakLaw: "F2",
   peaks: 300,
 } as const;

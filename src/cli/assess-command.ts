@@ -1,6 +1,7 @@
 /** `edgelaw assess`: data, eigenvalues or a sample in, verdict out. */
 import type { Command } from "commander";
 import { type ConstantsChoice, largestRootTest, type RootTestOptions } from "../assessment/largest-root.ts";
+import type { NumericTable } from "../assessment/numeric-table.ts";
 import { covarianceSpectrum } from "../assessment/sample-covariance.ts";
 import { sampleTest } from "../assessment/sample-test.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
@@ -18,6 +19,7 @@ import {
   type OutputSettings,
   outputSettings,
 } from "./output.ts";
+import { type Progress, watchProgress } from "./progress.ts";
 import {
   choiceOption,
   collectMentions,
@@ -146,11 +148,22 @@ function translated<T>(option: string, path: string, work: () => T): T {
   }
 }
 
+/**
+ * About how long the eigenvalues of a table take, from the cost that `covarianceSpectrum` states at 10⁹ steps a
+ * second (measured for orders 400 and 800); it only decides whether a bar is worth showing.
+ */
+function spectrumSeconds({ rows, columns, imaginary }: NumericTable): number {
+  const least = Math.min(rows, columns);
+  const order = imaginary === undefined ? least : 2 * least;
+  return (9 * order ** 3 + (rows * columns * least) / 2) / 1e9;
+}
+
 async function assessData(
   mentions: AssessMentions,
   { option, path }: { option: string; path: string },
   settings: OutputSettings,
   io: CommandIo,
+  progress: Progress,
 ): Promise<ReportDocument> {
   const field = choiceOption("--field", mentions.field, ["real", "complex"]);
   const options = rootOptions(mentions);
@@ -165,10 +178,12 @@ async function assessData(
     );
   }
   return translated(option, path, () => {
+    progress.announce(spectrumSeconds(table), 0, 2);
     const spectrum = covarianceSpectrum(table, {
       centre: mentions.keepMeans !== true,
       scaling: mentions.unitVariance === true ? "unit-variance" : "none",
     });
+    progress.listener(1, 2);
     const result = largestRootTest(spectrum, { ...options, complex });
     return eigenvalueReport(result, {
       ...builderOptions(settings),
@@ -241,7 +256,14 @@ async function runAssess(mentions: AssessMentions, io: CommandIo): Promise<0 | 2
   const source = sourceOf(mentions);
   const settings = outputSettings(mentions, io);
   const assess = { data: assessData, eigenvalues: assessEigenvalues, sample: assessSample }[source.source];
-  return deliver(await assess(mentions, source, settings, io), settings, io);
+  const progress = watchProgress(io);
+  let report: ReportDocument;
+  try {
+    report = await assess(mentions, source, settings, io, progress);
+  } finally {
+    progress.end();
+  }
+  return deliver(report, settings, io);
 }
 
 /** Adds the command to the program; `finish` takes the exit code. */

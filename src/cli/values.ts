@@ -61,12 +61,6 @@ function items(option: string, mentions: Mentions): string[] {
   return list.map((item) => item.trim());
 }
 
-/** A finite number, or undefined. */
-export function numberOption(option: string, mentions: Mentions): number | undefined {
-  const text = single(option, mentions);
-  return text === undefined ? undefined : parse(option, text, decimal);
-}
-
 /** An integer in a range, or undefined. */
 export function integerOption(
   option: string,

@@ -3,14 +3,15 @@
  *
  * Discretization by F. Bornemann, "On the numerical evaluation of Fredholm determinants", Math. Comp. 79 (2010) 871:
  * Gauss–Legendre nodes, the determinant of I − z √w K √w. The order grows by a third at a time; the error is read
- * off the last differences (quadrature), the rounding model of `discretized.ts`, and the truncation of half-lines.
+ * off the last differences (quadrature), the rounding model of `rounding-model.ts`, and the truncation of half-lines.
  */
 import { requireFinite, requireInteger, requireNonNegative } from "../core/check.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
 import type { Estimate } from "../core/estimate.ts";
 import { type Domain, partsOf } from "../quadrature/domain.ts";
-import { type Discretized, discretizedDeterminant } from "./discretized.ts";
+import { discretizedDeterminant } from "./discretized.ts";
 import type { Kernel } from "./kernel.ts";
+import type { Discretized } from "./rounding-model.ts";
 import { type Truncation, truncate } from "./truncation.ts";
 
 /** Options of {@link fredholmDeterminant}. */

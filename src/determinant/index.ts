@@ -5,6 +5,12 @@
  */
 export type { Estimate } from "../core/estimate.ts";
 export {
+  type ComplexDeterminantEstimate,
+  type ComplexDeterminantOptions,
+  type ComplexNumber,
+  complexDeterminant,
+} from "./complex-determinant.ts";
+export {
   type DeterminantEstimate,
   type DeterminantOptions,
   type DeterminantWithResolvent,

@@ -10,11 +10,11 @@
  * Chebyshev collocation of the integrated equation (L. Greengard, SIAM J. Numer. Anal. 28 (1991) 1071), Newton's
  * method; then q and q² are integrated from the right, so that nothing cancels.
  */
-import { LuDecomposition, Matrix } from "ml-matrix";
-import { chebyshevCoefficients, chebyshevPoints, clenshaw } from "../approximation/chebyshev.ts";
+import { chebyshevCoefficients, clenshaw } from "../approximation/chebyshev.ts";
 import { antiderivative, atLeft, atRight } from "../approximation/chebyshev-calculus.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
 import { airyAi, airyAiIntegral, airySquareIntegral } from "../special/airy.ts";
+import { solvePanels } from "./hastings-mcleod-boundary.ts";
 import { type PainleveValues, painleveSeries } from "./hastings-mcleod-series.ts";
 import { scaledRightTail } from "./tracy-widom-far.ts";
 
@@ -33,8 +33,7 @@ export interface LeftTail {
 export const LEFT_TAIL_END = -2;
 const SERIES_END = -11;
 const RIGHT_END = 8;
-const POINTS = 180;
-const PANELS = [-11, -9, -7, -5.5, -4, -3, -2, -1, 0, 1.5, 3.5, 8];
+const PANELS = [-11, -9, -7, -5.5, -4, -3, -2, -1, 0, 1.5, 3, 5, 8];
 const PANEL_POINTS = 30;
 
 /**
@@ -82,7 +81,7 @@ interface Panel {
 let panels: readonly Panel[] | undefined;
 
 function solved(s: number): PainleveValues {
-  panels ??= integrate(solveBoundaryProblem());
+  panels ??= buildPanels();
   let p = 0;
   while (p + 1 < panels.length && s >= panels[p].upper) p++;
   const { lower, upper, q, mu, slope, logF2 } = panels[p];
@@ -91,103 +90,33 @@ function solved(s: number): PainleveValues {
   return { q: at(q), mu: at(mu), slope: at(slope), logF2: at(logF2) };
 }
 
-/** Chebyshev coefficients of q on [−11, 8]. */
-function solveBoundaryProblem(): Float64Array {
-  const n = POINTS;
-  const a = SERIES_END;
-  const b = RIGHT_END;
-  const half = 0.5 * (b - a);
-  const s = chebyshevPoints(n, a, b);
-  const qa = painleveSeries(-a).q;
-  const qb = airyAi(b);
-  const green = doubleIntegration(n, half);
-  const line = Float64Array.from(s, (x: number) => qa + ((qb - qa) * (x - a)) / (b - a));
-  // Starting guess: the positive root of 2q² = −s, rounded off at 0; v its second derivative, by differences.
-  const guess = (x: number): number => Math.sqrt(0.25 * (Math.sqrt(x * x + 0.6) - x));
-  const h = 1e-3;
-  const v = Float64Array.from(s, (x: number) => (guess(x + h) - 2 * guess(x) + guess(x - h)) / (h * h));
-  let q = line;
-  for (let step = 0; step < 40; step++) {
-    q = apply(green, v, line);
-    // Residual r = v − s q − 2q³; Newton: (I − diag(s + 6q²) G) δ = −r.
-    const matrix = Matrix.zeros(n, n);
-    const right = Matrix.zeros(n, 1);
-    for (let i = 0; i < n; i++) {
-      const d = s[i] + 6 * q[i] * q[i];
-      for (let j = 0; j < n; j++) matrix.set(i, j, (i === j ? 1 : 0) - d * green[i * n + j]);
-      right.set(i, 0, s[i] * q[i] + 2 * q[i] ** 3 - v[i]);
-    }
-    const delta = new LuDecomposition(matrix).solve(right).to1DArray();
-    let size = 0;
-    for (let i = 0; i < n; i++) {
-      v[i] += delta[i];
-      size = Math.max(size, Math.abs(delta[i]));
-    }
-    if (size < 1e-9) break; // Newton squares it
-  }
-  return chebyshevCoefficients(apply(green, v, line), n - 1);
-}
-
-function apply(green: Float64Array, v: Float64Array, line: Float64Array): Float64Array<ArrayBuffer> {
-  const n = v.length;
-  const out = new Float64Array(n);
-  for (let i = 0; i < n; i++) {
-    let sum = 0;
-    for (let j = 0; j < n; j++) sum += green[i * n + j] * v[j];
-    out[i] = line[i] + sum;
-  }
-  return out;
-}
-
-/** Matrix of v ↦ the solution of u'' = v, u = 0 at both ends, from and to values at the Chebyshev points. */
-function doubleIntegration(n: number, half: number): Float64Array {
-  const t = chebyshevPoints(n, -1, 1);
-  const green = new Float64Array(n * n);
-  const unit = new Float64Array(n);
-  for (let j = 0; j < n; j++) {
-    unit[j] = 1;
-    const u = antiderivative(antiderivative(chebyshevCoefficients(unit, n - 1), half), half);
-    unit[j] = 0;
-    const left = atLeft(u);
-    const right = atRight(u);
-    for (let i = 0; i < n; i++) {
-      const straight = left + 0.5 * (right - left) * (t[i] + 1);
-      green[i * n + j] = clenshaw(u, 0, u.length - 1, t[i]) - straight;
-    }
-  }
-  return green;
+/** Starting guess of q at the breaks: Ai on the right, on the left the root of 2q² = −s raised to meet it at 0. */
+function startingValues(): Float64Array {
+  const values = Float64Array.from(PANELS, (s) => (s < 0 ? Math.sqrt(airyAi(0) ** 2 - 0.5 * s) : airyAi(s)));
+  values[0] = painleveSeries(-SERIES_END).q;
+  return values;
 }
 
 /** From the right end inwards, panel by panel: μ = ∫ q, slope = ∫ q², −log F2 = ∫ slope. */
-function integrate(global: Float64Array): Panel[] {
+function buildPanels(): Panel[] {
+  const values = solvePanels(PANELS, startingValues(), PANEL_POINTS);
   const out: Panel[] = [];
   let mu = airyAiIntegral(RIGHT_END);
   let slope = airySquareIntegral(RIGHT_END);
   let minusLog = scaledRightTail(2, RIGHT_END).survival * Math.exp((-4 / 3) * RIGHT_END ** 1.5);
-  for (let p = PANELS.length - 2; p >= 0; p--) {
+  for (let p = values.length - 1; p >= 0; p--) {
     const lower = PANELS[p];
     const upper = PANELS[p + 1];
     const half = 0.5 * (upper - lower);
-    const points = chebyshevPoints(PANEL_POINTS, lower, upper);
-    const q = points.map((x) => {
-      const t = (x - SERIES_END - (RIGHT_END - x)) / (RIGHT_END - SERIES_END);
-      return clenshaw(global, 0, global.length - 1, t);
-    });
-    const qc = chebyshevCoefficients(q, PANEL_POINTS - 1);
-    const muc = fromRight(qc, half, mu);
-    const slopec = fromRight(
-      chebyshevCoefficients(
-        q.map((x) => x * x),
-        PANEL_POINTS - 1,
-      ),
-      half,
-      slope,
-    );
+    const squares = values[p].map((x) => x * x);
+    const q = chebyshevCoefficients(values[p], PANEL_POINTS - 1);
+    const muc = fromRight(q, half, mu);
+    const slopec = fromRight(chebyshevCoefficients(squares, PANEL_POINTS - 1), half, slope);
     const logc = fromRight(slopec, half, minusLog);
     mu = atLeft(muc);
     slope = atLeft(slopec);
     minusLog = atLeft(logc);
-    out.unshift({ lower, upper, q: qc, mu: muc, slope: slopec, logF2: logc.map((c) => -c) });
+    out.unshift({ lower, upper, q, mu: muc, slope: slopec, logF2: logc.map((c) => -c) });
   }
   return out;
 }

@@ -92,6 +92,22 @@ describe("a data matrix", () => {
   });
 });
 
+describe("progress bar", () => {
+  it("is there before a long eigenvalue computation, on a terminal only", async () => {
+    const uniform = seededGenerator(2);
+    const rows = Array.from({ length: 500 }, () =>
+      Array.from({ length: 500 }, () => uniform().toFixed(3)).join(","),
+    );
+    const big = { files: { x: rows.join("\n") } };
+    const argv = ["assess", "--data", "x", "--components", "1"];
+    expect((await runInMemory(argv, { ...big, terminal: true })).bar).toContain("computing [");
+    expect((await runInMemory(argv, { ...big, terminal: false })).bar).toBe("");
+    expect((await runInMemory(["assess", "--data", "array-real.csv"], { files, terminal: true })).bar).toBe(
+      "",
+    );
+  });
+});
+
 describe("eigenvalues", () => {
   // n = p = 10, largest root 4.25, p-value about 0.06: I. M. Johnstone, Proc. ICM Madrid 2006 (from memory); the
   // digits recomputed independently: 0.0598537204 with the classical constants, 0.0602539283 with the shifted ones.
