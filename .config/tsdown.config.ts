@@ -1,6 +1,7 @@
 import { defineConfig } from "tsdown";
 
 export default defineConfig({
+  cwd: process.cwd(),
   entry: {
     index: "src/index.ts",
     quadrature: "src/quadrature/index.ts",

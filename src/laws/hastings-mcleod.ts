@@ -13,10 +13,9 @@
 import { chebyshevCoefficients, clenshaw } from "../approximation/chebyshev.ts";
 import { antiderivative, atLeft, atRight } from "../approximation/chebyshev-calculus.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
-import { airyAi, airyAiIntegral, airySquareIntegral } from "../special/airy.ts";
+import { airyAi, airyAiIntegral, airyAiPrime } from "../special/airy.ts";
 import { solvePanels } from "./hastings-mcleod-boundary.ts";
 import { type PainleveValues, painleveSeries } from "./hastings-mcleod-series.ts";
-import { scaledRightTail } from "./tracy-widom-far.ts";
 
 /** Which law. */
 export type PainleveLaw = "beta1" | "beta2" | "beta4-unscaled";
@@ -33,8 +32,11 @@ export interface LeftTail {
 export const LEFT_TAIL_END = -2;
 const SERIES_END = -11;
 const RIGHT_END = 8;
-const PANELS = [-11, -9, -7, -5.5, -4, -3, -2, -1, 0, 1.5, 3, 5, 8];
-const PANEL_POINTS = 30;
+// Panels about as long as q, μ, log F2 need for 1e-16 with 18 points.
+const PANELS = [
+  -11, -9.5, -8, -7, -6, -5, -4.25, -3.5, -2.75, -2, -1.25, -0.5, 0.25, 1, 2, 3, 4, 5, 6, 7, 8,
+];
+const PANEL_POINTS = 18;
 
 /**
  * Left tail of a Tracy–Widom law.
@@ -101,9 +103,13 @@ function startingValues(): Float64Array {
 function buildPanels(): Panel[] {
   const values = solvePanels(PANELS, startingValues(), PANEL_POINTS);
   const out: Panel[] = [];
-  let mu = airyAiIntegral(RIGHT_END);
-  let slope = airySquareIntegral(RIGHT_END);
-  let minusLog = scaledRightTail(2, RIGHT_END).survival * Math.exp((-4 / 3) * RIGHT_END ** 1.5);
+  // Their values for q = Ai. Beside those at s ≤ −2 they are nothing, so that the closed forms may cancel.
+  const s = RIGHT_END;
+  const ai = airyAi(s);
+  const prime = airyAiPrime(s);
+  let mu = airyAiIntegral(s);
+  let slope = prime * prime - s * ai * ai;
+  let minusLog = (2 * s * s * ai * ai - 2 * s * prime * prime - ai * prime) / 3;
   for (let p = values.length - 1; p >= 0; p--) {
     const lower = PANELS[p];
     const upper = PANELS[p + 1];
