@@ -15,6 +15,8 @@ export default defineConfig({
   },
   format: "esm",
   platform: "neutral",
+  // Only the command line touches the machine; a test walks the imports.
+  deps: { neverBundle: [/^node:/] },
   target: "es2022",
   outDir: "dist",
   dts: true,

@@ -65,10 +65,17 @@ export function fromSamples(
 ): PiecewiseChebyshev {
   const coefficients = new Float64Array((breaks.length - 1) * (degree + 1));
   for (let p = 0; p + 1 < breaks.length; p++) {
-    coefficients.set(
-      chebyshevCoefficients(samples.subarray(p * count, (p + 1) * count), degree),
-      p * (degree + 1),
-    );
+    const c = chebyshevCoefficients(samples.subarray(p * count, (p + 1) * count), degree);
+    coefficients.set(withoutNoise(c), p * (degree + 1));
   }
   return new PiecewiseChebyshev(Float64Array.from(breaks), degree, coefficients);
+}
+
+/** Sets the trailing coefficients to 0 that are below a rounding of the largest: they hold noise, not the function. */
+function withoutNoise(c: Float64Array): Float64Array {
+  const most = c.reduce((m, x) => Math.max(m, Math.abs(x)), 0);
+  let last = c.length - 1;
+  while (last > 0 && Math.abs(c[last]) <= 2 ** -53 * most) last--;
+  c.fill(0, last + 1);
+  return c;
 }

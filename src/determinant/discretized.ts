@@ -3,6 +3,7 @@
  * the dense elimination, with an estimate of what rounding and kernel evaluation did to it (`rounding-model.ts`).
  */
 import { InvalidArgumentError } from "../core/errors.ts";
+import { Workspace } from "../core/workspace.ts";
 import { eliminateDensePivoted, eliminateDenseUnpivoted } from "../linalg/dense-general.ts";
 import { eliminateDenseSymmetric } from "../linalg/dense-symmetric.ts";
 import { summarizePivots } from "../linalg/pivots.ts";
@@ -33,6 +34,7 @@ import {
  * The determinant on `order` points a panel.
  *
  * @param extra - A point at which the resolvent is wanted as well.
+ * @param workspace - Work space that successive orders share.
  */
 export function discretizedDeterminant(
   kernel: Kernel,
@@ -40,18 +42,20 @@ export function discretizedDeterminant(
   order: number,
   z: number,
   extra: number | undefined,
+  workspace = new Workspace(8 * (order + 1) * panels.length),
 ): Discretized {
-  const scene = sceneOf(kernel, panels, order, z, extra);
+  workspace.reset();
+  const scene = sceneOf(kernel, panels, order, z, extra, workspace);
   if (kernel.kind === "smooth") return smoothDeterminant(scene, kernel);
   return kernel.antisymmetricPair ? pairDeterminant(scene, kernel) : generalDeterminant(scene, kernel);
 }
 
 /** Two generators, symmetric: the fast route. */
 function pairDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
-  const { z, nodes, roots, pivots, rows } = scene;
-  const a = new Float64Array(rows);
-  const b = new Float64Array(rows);
-  const e = new Float64Array(rows);
+  const { z, nodes, roots, pivots, rows, workspace } = scene;
+  const a = workspace.take(rows);
+  const b = workspace.take(rows);
+  const e = workspace.take(rows);
   kernel.sample(nodes, rows, [a, b], [], e);
   const size = newSize();
   for (let i = 0; i < rows; i++) {

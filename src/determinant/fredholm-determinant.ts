@@ -8,6 +8,7 @@
 import { requireFinite, requireInteger, requireNonNegative } from "../core/check.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
 import type { Estimate } from "../core/estimate.ts";
+import { Workspace } from "../core/workspace.ts";
 import { type Domain, partsOf } from "../quadrature/domain.ts";
 import { discretizedDeterminant } from "./discretized.ts";
 import type { Kernel } from "./kernel.ts";
@@ -127,7 +128,9 @@ function refine(
     options.order === undefined ? undefined : requireInteger("options.order", options.order, 1, limit);
   const truncation = truncate(partsOf(domain), kernel, z);
   if (z === 0) return { ...exactlyOne(), resolvent: exact(0) };
-  const at = (n: number): Discretized => discretizedDeterminant(kernel, truncation.panels, n, z, point);
+  const workspace = new Workspace(512);
+  const at = (n: number): Discretized =>
+    discretizedDeterminant(kernel, truncation.panels, n, z, point, workspace);
   if (order === undefined) return settle(at, maxOrder, tolerance, truncation, point).result;
   const asked = at(order);
   const best = settle(

@@ -3,6 +3,7 @@
  * z √w K √w for the dense routes.
  */
 import { InvalidArgumentError } from "../core/errors.ts";
+import { Workspace } from "../core/workspace.ts";
 import { fillPanels, type Panel } from "../quadrature/panels.ts";
 import type { IntegrableKernel, Kernel, SmoothKernel } from "./kernel.ts";
 
@@ -12,6 +13,7 @@ const EPS = 2 ** -53;
 export interface Scene {
   readonly kernel: Kernel;
   readonly z: number;
+  readonly workspace: Workspace;
   readonly nodes: Float64Array;
   readonly roots: Float64Array; // square roots of the weights; 1 at the extra point
   readonly pivots: number;
@@ -27,11 +29,12 @@ export function sceneOf(
   order: number,
   z: number,
   extra: number | undefined,
+  workspace: Workspace,
 ): Scene {
   const pivots = order * panels.length;
   const rows = pivots + (extra === undefined ? 0 : 1);
-  const nodes = new Float64Array(rows);
-  const roots = new Float64Array(rows);
+  const nodes = workspace.take(rows);
+  const roots = workspace.take(rows);
   fillPanels(panels, order, nodes, roots);
   for (let i = 0; i < pivots; i++) roots[i] = Math.sqrt(roots[i]);
   if (extra !== undefined) {
@@ -41,6 +44,7 @@ export function sceneOf(
   return {
     kernel,
     z,
+    workspace,
     nodes,
     roots,
     pivots,
@@ -52,7 +56,7 @@ export function sceneOf(
 
 /** The matrix √w K √w on `order` points a panel, row-major: for routes that need it whole. */
 export function kernelMatrix(kernel: Kernel, panels: readonly Panel[], order: number): Float64Array {
-  const scene = sceneOf(kernel, panels, order, 1, undefined);
+  const scene = sceneOf(kernel, panels, order, 1, undefined, new Workspace(4 * order * panels.length));
   return kernel.kind === "smooth" ? evaluateMatrix(scene, kernel, false) : formMatrix(scene, kernel);
 }
 

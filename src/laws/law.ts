@@ -29,6 +29,8 @@ export interface LawAccuracy {
   readonly pdfAbsolute: number;
   /** Worst absolute error of `quantile` and `upperQuantile` for probabilities from 1e-3 to 1 − 1e-3. */
   readonly quantileAbsolute: number;
+  /** Worst absolute error of the mean, variance, skewness, excess kurtosis and cumulants. */
+  readonly momentAbsolute: number;
 }
 
 /** Where a number comes from, for reports. */
@@ -123,7 +125,7 @@ export interface Law {
    * The exact route (no table), with its error.
    * @param what - The quantity.
    * @param x - The point; for the quantiles, the probability.
-   * @param options - Tolerances for the exact route.
+   * @param options - Tolerances that `converged` is judged by; default 1e-12, absolute or relative.
    */
   estimate(
     what: LawQuantity,

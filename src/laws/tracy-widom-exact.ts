@@ -45,11 +45,17 @@ export const RIGHT_SWITCH: Readonly<Record<Beta, number>> = { 1: 15, 2: 9.5, 4: 
 // Right of this point 1 − F for β = 4 comes from the minors of V: as ½(c₋ + c₊) it would cancel.
 const MINOR_SWITCH = -2.01;
 
+/** Whether the point lies in the right tail of β = 4 that is computed from minors. */
+export function hasMinorRoute(beta: Beta, s: number): boolean {
+  return beta === 4 && s > MINOR_SWITCH;
+}
+
 /** The law at s by the exact route. */
 export function exactPoint(beta: Beta, s: number, options: DeterminantOptions = {}): ExactPoint {
   if (s < LEFT_SWITCH[beta]) return leftPoint(beta, s);
   if (s > RIGHT_SWITCH[beta]) return farPoint(beta, s);
-  if (beta === 4) return s > MINOR_SWITCH ? minorPoint(s) : meanPoint(s, options);
+  if (hasMinorRoute(beta, s)) return minorPoint(s);
+  if (beta === 4) return meanPoint(s, options);
   const d = determinantWithResolvent(beta === 2 ? airyKernel() : airySumKernel(), halfLine(s), s, options);
   return pointFrom(d, d.complement, product(d, d.resolvent));
 }
@@ -135,10 +141,10 @@ function leftPoint(beta: Beta, s: number): ExactPoint {
   return {
     cdf,
     survival: estimate(1 - value, value * relative + 2 ** -53, true, order),
-    pdf: estimate(density, density * (relative + 2e-13), true, order),
+    pdf: estimate(density, density * (relative + 1e-14), true, order),
     logCdf: estimate(tail.logCdf, relative, true, order),
     logSurvival: estimate(Math.log1p(-value), 1.01 * value * relative + 2 ** -52 * value, true, order),
-    logPdf: estimate(logPdf, relative + 2e-13 + 2 ** -53 * Math.abs(logPdf), true, order),
+    logPdf: estimate(logPdf, relative + 1e-14 + 2 ** -53 * Math.abs(logPdf), true, order),
   };
 }
 

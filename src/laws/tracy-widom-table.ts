@@ -9,8 +9,9 @@
 import { fromSamples, type PiecewiseChebyshev, tabulationPoints } from "../approximation/piecewise.ts";
 import { airyExponent } from "../special/airy.ts";
 import { tracyWidomLeftTail } from "./hastings-mcleod.ts";
-import { type Beta, exactPoint, expMinusExponent, LEFT_SWITCH, RIGHT_SWITCH } from "./tracy-widom-exact.ts";
+import { type Beta, expMinusExponent, LEFT_SWITCH, RIGHT_SWITCH } from "./tracy-widom-exact.ts";
 import { scaledRightTail } from "./tracy-widom-far.ts";
+import { samplePoint } from "./tracy-widom-samples.ts";
 
 /** The six pointwise functions of one law, in the unscaled variable. */
 export interface PointwiseLaw {
@@ -22,10 +23,10 @@ export interface PointwiseLaw {
   logSurvival(s: number): number;
 }
 
-const SAMPLES = 22;
+const SAMPLES = 36;
 const DEGREE = 17;
 /** Pieces left of this point hold F, right of it 1 − F; near the medians −1.27, −1.80, −3.29. */
-const MIDDLE: Readonly<Record<Beta, number>> = { 1: -1, 2: -2, 4: -3 };
+const MIDDLE: Readonly<Record<Beta, number>> = { 1: -1.5, 2: -2, 4: -3.5 };
 /** From here on the exponential factor is taken out. */
 const SCALED_FROM = 1;
 /** Ends of the pieces of the scaled tail: widths grow with s, as the distance to the branch point at 0 does. */
@@ -146,10 +147,10 @@ function buildTable(beta: Beta): Table {
       density[i] = tail.density;
       return;
     }
-    const point = exactPoint(beta, s);
+    const point = samplePoint(beta, s);
     const scale = piece < firstScaled ? 1 : expMinusExponent(kappa, s);
-    probability[i] = piece < firstUpper ? point.cdf.value : point.survival.value / scale;
-    density[i] = point.pdf.value / scale;
+    probability[i] = piece < firstUpper ? point.cdf : point.survival / scale;
+    density[i] = point.pdf / scale;
   });
   return {
     probability: fromSamples(breaks, SAMPLES, DEGREE, probability),

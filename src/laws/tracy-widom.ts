@@ -66,6 +66,7 @@ const ACCURACY: Readonly<Record<Beta, LawAccuracy>> = {
     survivalRelative: 2e-14,
     pdfAbsolute: 5e-15,
     quantileAbsolute: 1e-13,
+    momentAbsolute: 1e-12,
   },
   2: {
     cdfAbsolute: 5e-16,
@@ -73,6 +74,7 @@ const ACCURACY: Readonly<Record<Beta, LawAccuracy>> = {
     survivalRelative: 2e-14,
     pdfAbsolute: 5e-15,
     quantileAbsolute: 1e-13,
+    momentAbsolute: 1e-12,
   },
   4: {
     cdfAbsolute: 5e-16,
@@ -80,6 +82,7 @@ const ACCURACY: Readonly<Record<Beta, LawAccuracy>> = {
     survivalRelative: 2e-14,
     pdfAbsolute: 5e-15,
     quantileAbsolute: 1e-13,
+    momentAbsolute: 1e-12,
   },
 };
 
@@ -202,8 +205,10 @@ function exactQuantity(
   const point = exactPoint(beta, x);
   const found = point[what];
   const { absTol, relTol } = options;
-  if (absTol === undefined && relTol === undefined) return found;
-  const tolerance = Math.max(absTol ?? 0, (relTol ?? 0) * Math.abs(found.value));
+  const asked = absTol !== undefined || relTol !== undefined;
+  const tolerance = asked
+    ? Math.max(absTol ?? 0, (relTol ?? 0) * Math.abs(found.value))
+    : Math.max(1e-12, 1e-12 * Math.abs(found.value));
   return { ...found, converged: found.error <= tolerance };
 }
 

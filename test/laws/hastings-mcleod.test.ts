@@ -11,7 +11,8 @@ import {
 import { halfLine } from "../../src/quadrature/domain.ts";
 import { airyAi } from "../../src/special/airy.ts";
 import fixture from "../fixtures/tracy-widom.json" with { type: "json" };
-import { differenceFrom } from "../precise.ts";
+import stepped from "../fixtures/tracy-widom-left-tail.json" with { type: "json" };
+import { differenceFrom, relativeDifference } from "../precise.ts";
 
 const LAWS: readonly (readonly [PainleveLaw, "beta1" | "beta2" | "beta4_G"])[] = [
   ["beta1", "beta1"],
@@ -38,6 +39,41 @@ describe("left tail by Painlevé II", () => {
       }
     }
     expect(checked).toBeGreaterThan(50);
+  });
+
+  it("agrees with Painlevé II stepped at 330 digits, in every point within its error, which is sharp", () => {
+    const laws: readonly PainleveLaw[] = ["beta2", "beta1", "beta4-unscaled"];
+    for (const [k, law] of laws.entries()) {
+      const pessimism: number[] = [];
+      for (const row of stepped.rows) {
+        const s = Number(row[0]);
+        if (s > LEFT_TAIL_END) continue;
+        const logarithm = String(row[2 + 2 * k]);
+        const tail = tracyWidomLeftTail(law, s);
+        const error = Math.abs(differenceFrom(tail.logCdf, logarithm));
+        const what = `${law} at ${s}`;
+        expect(error, what).toBeLessThanOrEqual(tail.relativeError);
+        expect(error, what).toBeLessThanOrEqual(1e-14 + 2.5 * Number.EPSILON * Math.abs(Number(logarithm)));
+        expect(Math.abs(relativeDifference(tail.derivative, String(row[3 + 2 * k]))), what).toBeLessThan(
+          5e-15,
+        );
+        pessimism.push(tail.relativeError / Math.max(error, Number.MIN_VALUE));
+      }
+      expect(pessimism.length).toBeGreaterThan(300);
+      pessimism.sort((a, b) => a - b);
+      expect(pessimism[pessimism.length >> 1], law).toBeLessThan(30);
+    }
+  });
+
+  it("gives q with relative accuracy on both sides of 0", () => {
+    let right = 0;
+    for (const [s, q] of stepped.rows.map((row) => [Number(row[0]), String(row[1])] as const)) {
+      if (s > 0) right++;
+      expect(Math.abs(relativeDifference(hastingsMcLeod(s), q)), `s = ${s}`).toBeLessThan(
+        s > 0 ? 3e-14 : 4e-15,
+      );
+    }
+    expect(right).toBeGreaterThan(20);
   });
 
   it("is the second route to F2: the determinant agrees where it has digits", () => {
@@ -75,5 +111,9 @@ describe("left tail by Painlevé II", () => {
       expect(() => tracyWidomLeftTail("beta1", s)).toThrow(InvalidArgumentError);
     }
     expect(() => hastingsMcLeod(9)).toThrow(/s: expected a number from -1e100 to 8/);
+    expect(hastingsMcLeod(Number.NaN)).toBeNaN();
+    const any = tracyWidomLeftTail as (law: unknown, s: unknown) => unknown;
+    expect(() => any("beta3", -4)).toThrow(/law: expected .* received "beta3"/);
+    for (const s of ["-4", undefined, null]) expect(() => any("beta2", s)).toThrow(InvalidArgumentError);
   });
 });

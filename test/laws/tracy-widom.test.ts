@@ -4,6 +4,7 @@ import { type QuaternionScaling, tracyWidom } from "../../src/laws/tracy-widom.t
 import { scaledRightTail } from "../../src/laws/tracy-widom-far.ts";
 import { driveLaw, type LawReference } from "../drivers/law-driver.ts";
 import fixture from "../fixtures/tracy-widom.json" with { type: "json" };
+import offGrid from "../fixtures/tracy-widom-off-grid.json" with { type: "json" };
 import { differenceFrom } from "../precise.ts";
 
 type Key = "beta1" | "beta2" | "beta4_G";
@@ -66,6 +67,30 @@ describe("tracyWidom: the figures the reports rest on", () => {
       expect(checked).toBeGreaterThan(30);
     },
   );
+
+  it.each(laws)("%#: keeps these figures between the grid points, its exact route honest", (law, key) => {
+    const density = key === "beta1" ? "pdf1" : key === "beta2" ? "pdf2" : "pdf4_G";
+    expect(offGrid.rows.length).toBeGreaterThan(100);
+    for (const row of offGrid.rows) {
+      const [hi, lo] = row[key];
+      expect(Math.abs(law.cdf(row.s) - hi - lo), `cdf(${row.s})`).toBeLessThanOrEqual(5e-16);
+      expect(Math.abs(law.pdf(row.s) - row[density]), `pdf(${row.s})`).toBeLessThanOrEqual(1e-15);
+      // 1 − hi is exact for hi ≥ ½.
+      const tail = 1 - hi - lo;
+      const survival = law.estimate("survival", row.s);
+      if (hi >= 0.5) {
+        expect(Math.abs(law.survival(row.s) - tail) / tail, `survival(${row.s})`).toBeLessThanOrEqual(2e-14);
+        expect(Math.abs(survival.value - tail), `exact survival(${row.s})`).toBeLessThanOrEqual(
+          survival.error,
+        );
+      }
+      const exact = law.estimate("cdf", row.s);
+      expect(Math.abs(exact.value - hi - lo), `exact cdf(${row.s})`).toBeLessThanOrEqual(exact.error);
+      const pdf = law.estimate("pdf", row.s);
+      expect(Math.abs(pdf.value - row[density]), `exact pdf(${row.s})`).toBeLessThanOrEqual(pdf.error);
+      for (const found of [exact, survival, pdf]) expect(found.converged).toBe(true);
+    }
+  });
 
   it("has the moments and quantiles of all three β = 4 scalings", () => {
     for (const [scaling, key] of [

@@ -50,6 +50,7 @@ export function gumbelLaw(options: GumbelOptions = {}): Law {
       survivalRelative: 1e-14,
       pdfAbsolute: 1e-15,
       quantileAbsolute: 1e-14,
+      momentAbsolute: 1e-12,
     },
     provenance: {
       formula: "F(x) = exp(−exp(−x))",
