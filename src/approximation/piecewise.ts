@@ -3,6 +3,10 @@
  */
 import { chebyshevCoefficients, chebyshevPoints, clenshaw } from "./chebyshev.ts";
 
+// Each expansion reaches a little beyond its interval: noise in the samples is largest at the ends of an expansion,
+// where all T_k are ±1, and those ends are then never used.
+const MARGIN = 0.1;
+
 /** Chebyshev expansions of one degree on consecutive intervals. */
 export class PiecewiseChebyshev {
   readonly breaks: Float64Array;
@@ -37,18 +41,21 @@ export class PiecewiseChebyshev {
   evaluateOn(piece: number, x: number): number {
     const lower = this.breaks[piece];
     const upper = this.breaks[piece + 1];
-    const t = (x - lower - (upper - x)) / (upper - lower);
+    const t = (x - lower - (upper - x)) / ((1 + MARGIN) * (upper - lower));
     return clenshaw(this.coefficients, piece * (this.degree + 1), this.degree, t);
   }
 }
 
 /**
- * Points at which a function must be sampled to be tabulated: `count` Chebyshev points on each interval.
+ * Points at which a function must be sampled to be tabulated: `count` Chebyshev points on each interval, a
+ * twentieth of its length beyond both ends.
  */
 export function tabulationPoints(breaks: readonly number[], count: number): Float64Array {
   const points = new Float64Array((breaks.length - 1) * count);
-  for (let p = 0; p + 1 < breaks.length; p++)
-    points.set(chebyshevPoints(count, breaks[p], breaks[p + 1]), p * count);
+  for (let p = 0; p + 1 < breaks.length; p++) {
+    const margin = 0.5 * MARGIN * (breaks[p + 1] - breaks[p]);
+    points.set(chebyshevPoints(count, breaks[p] - margin, breaks[p + 1] + margin), p * count);
+  }
   return points;
 }
 

@@ -33,6 +33,7 @@ const INDEPENDENT_FACTOR = 3; // errors that do
 /** Sums over the matrix A that the rounding model reads. */
 export interface Size {
   trace: number; // Σ |A_ii|
+  sum: number; // Σ A_ii
   diagonal: number; // Σ A_ii²
   slope: number; // Σ |x_i| |K_ii − K_(i−1)(i−1)|: roundings of the argument move the trace by so many units
   cancellation: number; // Σ of squares of what cancels in neighbouring entries (generators only)
@@ -42,13 +43,14 @@ export interface Size {
 
 /** All sums zero. */
 export function newSize(): Size {
-  return { trace: 0, diagonal: 0, slope: 0, cancellation: 0, square: 0, tilt: 0 };
+  return { trace: 0, sum: 0, diagonal: 0, slope: 0, cancellation: 0, square: 0, tilt: 0 };
 }
 
 /** Reads the weighted diagonal entries into the size. */
 export function addDiagonal(size: Size, scene: Scene, i: number, entry: number, before: number): void {
   const { roots, nodes } = scene;
   size.trace += Math.abs(entry);
+  size.sum += entry;
   size.diagonal += entry * entry;
   if (i > 0)
     size.slope += Math.abs(
@@ -76,8 +78,8 @@ export function withNoise(
     final += e[q];
     absolute += Math.abs(e[q]);
   }
-  // Σ e_final − trace = Σ v²/m over all eliminated entries: twice that is the squared norm of the off-diagonal part.
-  const raised = Math.max(0, Math.abs(final) - size.trace);
+  // Σ e_final − Σ A_ii = Σ v²/m over all eliminated entries: twice that is the squared norm of the off-diagonal part.
+  const raised = Math.abs(final - size.sum);
   const norm = Math.sqrt(size.square + 2 * raised * Math.max(1, summary.largestPivot));
   const unit = EPS + evaluationError;
   const shift = scene.offset * EPS * Math.sqrt(size.cancellation);
@@ -97,7 +99,13 @@ export function withNoise(
     EPS * (Math.abs(summary.complement) < 0.5 ? absolute : 1 + value);
   const resolvent = rows > pivots ? e[pivots] : Number.NaN;
   return {
-    ...summary,
+    // Field by field: spreading the summary costs more than the whole elimination at small orders.
+    value: summary.value,
+    complement: summary.complement,
+    logAbs: summary.logAbs,
+    sign: summary.sign,
+    smallestPivot: summary.smallestPivot,
+    largestPivot: summary.largestPivot,
     noise: relative * value + EPS * (value + Math.min(1, Math.abs(summary.complement))),
     complementNoise,
     resolvent,

@@ -9,11 +9,7 @@
  * P. Ferrari, H. Spohn, J. Phys. A 38 (2005) L557. Derivatives: (log det)' = R(s, s), R the resolvent kernel.
  */
 import type { Estimate } from "../core/estimate.ts";
-import {
-  type DeterminantOptions,
-  type DeterminantWithResolvent,
-  determinantWithResolvent,
-} from "../determinant/fredholm-determinant.ts";
+import { type DeterminantOptions, determinantWithResolvent } from "../determinant/fredholm-determinant.ts";
 import { airyKernel } from "../kernels/airy-kernel.ts";
 import { airySumKernel } from "../kernels/airy-sum-kernel.ts";
 import { halfLine } from "../quadrature/domain.ts";
@@ -174,14 +170,4 @@ export function expMinusExponent(kappa: number, s: number): number {
   const [head, tail] = airyExponent(s);
   const value = Math.exp(-kappa * head);
   return value - value * kappa * tail;
-}
-
-/** Both determinants for the tests of F1 · det(I + V) = F2. */
-export function sumKernelDeterminants(s: number): {
-  minus: DeterminantWithResolvent;
-  plus: DeterminantWithResolvent;
-} {
-  const at = (z: number): DeterminantWithResolvent =>
-    determinantWithResolvent(airySumKernel(), halfLine(s), s, { z });
-  return { minus: at(1), plus: at(-1) };
 }
