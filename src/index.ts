@@ -22,6 +22,7 @@ export {
 export { type SmoothKernelOptions, smoothKernel } from "./kernels/smooth-kernel.ts";
 export type { Law, LawAccuracy, LawProvenance, LawQuantity } from "./laws/law.ts";
 export { type QuaternionScaling, type TracyWidomOptions, tracyWidom } from "./laws/tracy-widom.ts";
+export type { Beta } from "./laws/tracy-widom-exact.ts";
 export {
   type Domain,
   type HalfLine,

@@ -3,6 +3,7 @@
  *
  * @packageDocumentation
  */
+export { InvalidArgumentError, InvalidDataError } from "../core/errors.ts";
 export { andersonDarlingLimitSurvival } from "./anderson-darling.ts";
 export { formatPValue } from "./format-p-value.ts";
 export { kolmogorovSurvival, type Probability } from "./kolmogorov-smirnov.ts";

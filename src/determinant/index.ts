@@ -3,6 +3,7 @@
  *
  * @packageDocumentation
  */
+export { InvalidArgumentError } from "../core/errors.ts";
 export type { Estimate } from "../core/estimate.ts";
 export {
   type ComplexDeterminantEstimate,

@@ -3,6 +3,7 @@
  *
  * @packageDocumentation
  */
+export { InvalidArgumentError } from "../core/errors.ts";
 export { airyExponent } from "./airy-exponent.ts";
 export { airyAiIntegral, airyAiIntegralScaled } from "./airy-integral.ts";
 export {
