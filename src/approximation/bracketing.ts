@@ -22,7 +22,7 @@ export function safeNewton(
   const out = new Float64Array(2);
   let x = start;
   let previous = Number.POSITIVE_INFINITY;
-  for (let k = 0; k < 100; k++) {
+  for (let k = 0; k < 200; k++) {
     evaluate(x, out);
     const f = out[0];
     if (f === 0) return x;
@@ -31,12 +31,16 @@ export function safeNewton(
     const step = f / out[1];
     if (Math.abs(step) <= 2.3e-16 * Math.abs(x)) return x - step;
     let next = x - step;
-    if (!(next > low && next < high)) next = 0.5 * (low + high);
-    const moved = Math.abs(next - x);
-    // At the rounding floor Newton's steps stop shrinking: stay.
-    if (moved <= 2.3e-16 * Math.abs(x) || (moved < 1e-12 * (1 + Math.abs(x)) && moved >= 0.5 * previous))
-      return next;
-    previous = moved;
+    if (next > low && next < high) {
+      const moved = Math.abs(step);
+      // At the rounding floor Newton's steps stop shrinking: stay.
+      if (moved < 1e-12 * (1 + Math.abs(x)) && moved >= 0.5 * previous) return next;
+      previous = moved;
+    } else {
+      next = 0.5 * (low + high);
+      if (next === low || next === high) return next;
+      previous = Number.POSITIVE_INFINITY;
+    }
     x = next;
   }
   return x;

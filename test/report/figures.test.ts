@@ -10,7 +10,8 @@ import {
   sampleDensityFigure,
   tailFigure,
 } from "../../src/report/law-figures.ts";
-import { placeLabels, powerOfTen, powerTicks, renderSvg } from "../../src/report/svg.ts";
+import { placeLabels, renderSvg } from "../../src/report/svg.ts";
+import { powerOfTen, powerTicks } from "../../src/report/svg-axes.ts";
 import { gumbelLaw } from "./gumbel-law.ts";
 
 const law = gumbelLaw();
