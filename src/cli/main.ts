@@ -4,7 +4,9 @@ import { nodeIo } from "./io.ts";
 import { run } from "./run.ts";
 
 // A reader that stops early (`edgelaw … | head`) is no failure.
-process.stdout.on("error", (error: NodeJS.ErrnoException) => {
-  if (error.code !== "EPIPE") throw error;
-});
+for (const stream of [process.stdout, process.stderr]) {
+  stream.on("error", (error: NodeJS.ErrnoException) => {
+    if (error.code !== "EPIPE") throw error;
+  });
+}
 process.exitCode = await run(process.argv.slice(2), nodeIo());

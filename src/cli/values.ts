@@ -134,7 +134,7 @@ function choice<T extends string>(option: string, text: string, allowed: readonl
 export function numberList(option: string, mentions: Mentions): number[] {
   const numbers: number[] = [];
   for (const item of items(option, mentions)) {
-    if (item.includes(":")) numbers.push(...range(option, item));
+    if (item.includes(":")) for (const number of range(option, item)) numbers.push(number);
     else numbers.push(parse(option, item, decimal));
     if (numbers.length > MOST_NUMBERS)
       throw new InvalidArgumentError(option, `at most ${MOST_NUMBERS} numbers`, item);

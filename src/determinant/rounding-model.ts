@@ -26,8 +26,8 @@ const EPS = 2 ** -53;
 const NOISE_PIVOT = 4;
 // Safety factors of the rounding model, set so that no case of the honesty sweep comes within a factor 1.5.
 const ENTRY_FACTOR = 2; // entries of the matrix
-const SHIFT_FACTOR = 8; // rounding of nodes far from the origin
-const COMMON_FACTOR = 1.5; // errors that do not average out along the diagonal
+const SHIFT_FACTOR = 12; // rounding of nodes far from the origin
+const COMMON_FACTOR = 2; // errors that do not average out along the diagonal
 const INDEPENDENT_FACTOR = 3; // errors that do
 
 /** Sums over the matrix A that the rounding model reads. */
@@ -87,7 +87,9 @@ export function withNoise(
     ENTRY_FACTOR *
       (unit * Math.sqrt(3.3 * size.cancellation + size.square) + EPS * (norm + Math.sqrt(size.tilt))) +
     SHIFT_FACTOR * shift;
-  const smallest = Math.max(summary.smallestPivot, EPS);
+  // The smallest eigenvalue lies between the determinant and the smallest pivot when all lie below 1; pivots in the order
+  // of the nodes share it out among many, so their smallest alone would be too kind.
+  const smallest = Math.max(Math.min(summary.smallestPivot, Math.sqrt(Math.abs(summary.value))), EPS);
   // Independent errors of the diagonal add in squares; a common factor (a rounded constant in the kernel) does not.
   const trace =
     COMMON_FACTOR * EPS * (size.trace + scene.nodeRoundings * size.slope) +

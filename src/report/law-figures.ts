@@ -7,7 +7,9 @@
  * (P. Massart, Ann. Probab. 18 (1990) 1269): with probability at least 95 % the empirical distribution function
  * stays within √(log(2/0.05)/(2n)) of the true one everywhere.
  */
+
 import { InvalidArgumentError } from "../core/errors.ts";
+import { largest, least } from "../core/extremes.ts";
 import type { Law } from "../laws/law.ts";
 import type { FigureBlock, FigureLayer } from "./document.ts";
 import { lawKey } from "./provenance.ts";
@@ -95,7 +97,7 @@ export function densityFigure(law: Law, observed: readonly ObservedValue[]): Fig
     observed.map((o) => o.x),
   );
   const points = grid(low, high).map((x): [number, number] => [x, law.pdf(x)]);
-  const peak = Math.max(...points.map(([, y]) => y));
+  const peak = largest(points.map(([, y]) => y));
   const shown = observed.filter((o) => !beyond.includes(o.x)).sort((a, b) => b.x - a.x);
   const layers: FigureLayer[] = [{ kind: "curve", name: `density of ${law.symbol}`, points }];
   if (observed.length > 0) {
@@ -151,7 +153,7 @@ export function tailFigure(law: Law, observed: readonly ObservedValue[], level =
     .map((o) => ({ ...o, y: log10Survival(o.x) }))
     .filter((o) => Number.isFinite(o.y) && o.x >= low)
     .sort((a, b) => b.x - a.x);
-  const floor = Math.min(...curve.map(([, y]) => y));
+  const floor = least(curve.map(([, y]) => y));
   const layers: FigureLayer[] = [
     { kind: "curve", name: `P(X > x), ${law.symbol}`, points: curve },
     {
@@ -198,7 +200,7 @@ export function sampleDensityFigure(law: Law, sample: ArrayLike<number>): Figure
   const { low, high } = frame(law, [sorted[0] as number, sorted[sorted.length - 1] as number]);
   const points = grid(low, high).map((x): [number, number] => [x, law.pdf(x)]);
   const outside = Array.from(sorted).filter((x) => x < low || x > high).length;
-  const peak = Math.max(...points.map(([, y]) => y), ...bars.map(([, , y]) => y));
+  const peak = largest([...points.map(([, y]) => y), ...bars.map(([, , y]) => y)]);
   return {
     kind: "figure",
     id: `density-${lawKey(law.symbol)}`,
@@ -242,8 +244,8 @@ export function quantileFigure(law: Law, sample: ArrayLike<number>): FigureBlock
       law.quantile(p + epsilon),
     ]);
   const all = points.flat();
-  const low = Math.min(...all);
-  const high = Math.max(...all);
+  const low = least(all);
+  const high = largest(all);
   const pad = 0.04 * (high - low || 1);
   const domain: [number, number] = [low - pad, high + pad];
   const layers: FigureLayer[] = [];

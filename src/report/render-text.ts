@@ -1,9 +1,12 @@
 /** A report as plain text for a terminal: ruled tables, paragraphs wrapped at 92 columns. */
+
 import CliTable from "cli-table3";
+import { largest } from "../core/extremes.ts";
 import { displayTable, plainText, provenanceLines, sourceLine, tableNotes } from "./cells.ts";
 import type { FigureBlock, ReportBlock, ReportDocument, TableBlock } from "./document.ts";
 
 const WIDTH = 92;
+const ROWS_AT_A_TIME = 200;
 
 // Only a rule beneath the titles: numbers line up without a cage, and the table survives a copy and paste.
 const RULES = {
@@ -41,21 +44,29 @@ export function wrapText(text: string, width: number = WIDTH, indent = ""): stri
 
 function tableText(table: TableBlock, document: ReportDocument): string {
   const shown = displayTable(table);
-  const grid = new CliTable({
-    chars: RULES,
-    style: { head: [], border: [], "padding-left": 0, "padding-right": 0, compact: true },
-    colAligns: shown.columns.map((column) => column.align),
-  });
   const widths = shown.columns.map((column, i) =>
-    Math.max(column.title.length, ...shown.rows.map((row) => (row[i] as string).length)),
+    Math.max(column.title.length, largest(shown.rows.map((row) => row[i].length))),
   );
-  grid.push(
+  const lines = [
     shown.columns.map((column) => column.title),
     widths.map((width) => "─".repeat(width)),
-    ...shown.rows.map((row) => [...row]),
-  );
-  const body = grid
-    .toString()
+    ...shown.rows,
+  ];
+  // The table maker takes a time that grows with the square of the rows: long tables go through it in parts of equal
+  // column widths.
+  const parts: string[] = [];
+  for (let at = 0; at < lines.length; at += ROWS_AT_A_TIME) {
+    const grid = new CliTable({
+      chars: RULES,
+      style: { head: [], border: [], "padding-left": 0, "padding-right": 0, compact: true },
+      colAligns: shown.columns.map((column) => column.align),
+      colWidths: widths,
+    });
+    for (const line of lines.slice(at, at + ROWS_AT_A_TIME)) grid.push([...line]);
+    parts.push(grid.toString());
+  }
+  const body = parts
+    .join("\n")
     .split("\n")
     .map((line) => line.trimEnd())
     .join("\n");
