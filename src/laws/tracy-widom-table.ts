@@ -32,6 +32,9 @@ const SCALED_FROM = 1;
 /** Ends of the pieces of the scaled tail: widths grow with s, as the distance to the branch point at 0 does. */
 const SCALED_BREAKS = [1, 1.5, 2.25, 3.25, 4.75, 7, 10.5, 16, 24, 36, 54, 80, 120];
 
+// Left of this point the left tail is not evaluated: its logarithm, −|s|³/24 or −|s|³/12, is read as −∞.
+const OUT_OF_REACH = -1e100;
+
 interface Table {
   readonly probability: PiecewiseChebyshev;
   readonly density: PiecewiseChebyshev;
@@ -61,8 +64,7 @@ export function tabulatedTracyWidom(beta: Beta): PointwiseLaw {
 
   const law: PointwiseLaw = {
     cdf(s) {
-      if (s < start)
-        return s === Number.NEGATIVE_INFINITY ? 0 : Math.exp(tracyWidomLeftTail(leftName, s).logCdf);
+      if (s < start) return s < OUT_OF_REACH ? 0 : Math.exp(tracyWidomLeftTail(leftName, s).logCdf);
       const t = tableOf();
       if (s >= t.end) return 1;
       const piece = t.probability.locate(s);
@@ -71,8 +73,7 @@ export function tabulatedTracyWidom(beta: Beta): PointwiseLaw {
       return piece < t.firstScaled ? 1 - value : 1 - value * expMinusExponent(kappa, s);
     },
     survival(s) {
-      if (s < start)
-        return s === Number.NEGATIVE_INFINITY ? 1 : 1 - Math.exp(tracyWidomLeftTail(leftName, s).logCdf);
+      if (s < start) return s < OUT_OF_REACH ? 1 : 1 - Math.exp(tracyWidomLeftTail(leftName, s).logCdf);
       const t = tableOf();
       if (s >= t.end)
         return s === Number.POSITIVE_INFINITY ? 0 : far(s).survival * expMinusExponent(kappa, s);
@@ -83,7 +84,7 @@ export function tabulatedTracyWidom(beta: Beta): PointwiseLaw {
     },
     pdf(s) {
       if (s < start) {
-        if (s === Number.NEGATIVE_INFINITY) return 0;
+        if (s < OUT_OF_REACH) return 0;
         const tail = tracyWidomLeftTail(leftName, s);
         return Math.exp(tail.logCdf) * tail.derivative;
       }
@@ -94,7 +95,8 @@ export function tabulatedTracyWidom(beta: Beta): PointwiseLaw {
       return piece < t.firstScaled ? value : value * expMinusExponent(kappa, s);
     },
     logCdf(s) {
-      if (s < start) return s === Number.NEGATIVE_INFINITY ? s : tracyWidomLeftTail(leftName, s).logCdf;
+      if (s < start)
+        return s < OUT_OF_REACH ? Number.NEGATIVE_INFINITY : tracyWidomLeftTail(leftName, s).logCdf;
       const t = tableOf();
       if (s >= t.end) return -law.survival(s);
       const piece = t.probability.locate(s);
@@ -114,7 +116,7 @@ export function tabulatedTracyWidom(beta: Beta): PointwiseLaw {
     },
     logPdf(s) {
       if (s < start) {
-        if (s === Number.NEGATIVE_INFINITY) return s;
+        if (s < OUT_OF_REACH) return Number.NEGATIVE_INFINITY;
         const tail = tracyWidomLeftTail(leftName, s);
         return tail.logCdf + Math.log(tail.derivative);
       }

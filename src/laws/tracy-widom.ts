@@ -211,7 +211,7 @@ function rescaled(core: LawCore, factor: readonly [number, number], about: Descr
     (x: number): number => {
       const [h, l] = argument(x);
       const value = f(h);
-      return l === 0 ? value : value + l * slope(h);
+      return l === 0 || !Number.isFinite(value) ? value : value + l * slope(h);
     };
   const law: PointwiseLaw = {
     cdf: shifted(core.cdf, core.pdf),

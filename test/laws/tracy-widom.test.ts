@@ -176,6 +176,25 @@ describe("tracyWidom: the figures the reports rest on", () => {
     }
   });
 
+  it("never returns NaN and never throws for a number, whatever its size", () => {
+    const laws = [
+      tracyWidom(1),
+      tracyWidom(2),
+      ...(["standard", "unscaled", "stochastic-airy"] as const).map((scaling) => tracyWidom(4, { scaling })),
+    ];
+    const sizes = [5e-324, 1e-300, 1, 4, 6, 120, 1e3, 1e6, 1e10, 1e50, 1e99, 1e101, 1e150, 1e200, 1e308];
+    for (const law of laws) {
+      for (const x of [0, ...sizes, ...sizes.map((size) => -size)]) {
+        for (const what of ["pdf", "cdf", "survival", "logPdf", "logCdf", "logSurvival"] as const) {
+          expect(Number.isNaN(law[what](x)), `${law.symbol} ${what}(${x})`).toBe(false);
+        }
+      }
+      for (const p of [5e-324, 1e-300, 1 - 2 ** -53]) {
+        expect(Number.isFinite(law.quantile(p)) && Number.isFinite(law.upperQuantile(p))).toBe(true);
+      }
+    }
+  });
+
   it("returns one object a law and refuses what is none", () => {
     expect(tracyWidom(2)).toBe(tracyWidom(2));
     expect(tracyWidom(4)).toBe(tracyWidom(4, { scaling: "standard" }));
