@@ -12,6 +12,7 @@ import { Workspace } from "../core/workspace.ts";
 import { type Domain, partsOf } from "../quadrature/domain.ts";
 import { discretizedDeterminant } from "./discretized.ts";
 import type { Kernel } from "./kernel.ts";
+import { convergesLikeKink, extrapolateKink, type OrderedValue } from "./kink-extrapolation.ts";
 import type { Discretized } from "./rounding-model.ts";
 import { type Truncation, truncate } from "./truncation.ts";
 
@@ -168,16 +169,32 @@ function settle(
   let n = Math.min(FIRST_ORDER, Math.max(1, Math.floor(maxOrder / 2)));
   let current = at(n);
   const trail: Trail = { value: [], complement: [], resolvent: [] };
+  const history: OrderedValue[] = [{ order: n, value: current.value, noise: current.noise }];
+  // A mapped half-line may converge like n⁻² for another reason, its end.
+  const bounded = truncation.panels.every((panel) => !panel.mapped);
+  let kinked: DeterminantWithResolvent | undefined; // the best extrapolated result, for kernels with a kink
   for (;;) {
     const next = Math.max(n + 1, Math.ceil((n * 4) / 3));
-    if (next > maxOrder) return { result: assemble(current, n, trail, tolerance, truncation, false) };
+    if (next > maxOrder) {
+      return { result: kinked ?? assemble(current, n, trail, tolerance, truncation, false) };
+    }
     const refined = at(next);
     trail.value.push(Math.abs(refined.value - current.value));
     trail.complement.push(Math.abs(refined.complement - current.complement));
     trail.resolvent.push(Math.abs(refined.resolvent - current.resolvent));
     n = next;
     current = refined;
+    history.push({ order: n, value: current.value, noise: current.noise });
     if (trail.value.length < 2) continue;
+    if (point === undefined && bounded && convergesLikeKink(history)) {
+      const plain = assemble(current, n, trail, tolerance, truncation, false);
+      const found = extrapolated(plain, history, tolerance, truncation);
+      // Done when the tolerance holds, or when a further order no longer helps.
+      if (kinked !== undefined && found.error >= 0.5 * kinked.error) return { result: kinked };
+      if (found.error < plain.error) kinked = found;
+      if (found.converged && !tolerance.finest) return { result: found };
+      continue;
+    }
     if (isSettled(trail, current, point !== undefined))
       return { result: assemble(current, n, trail, tolerance, truncation, true) };
     if (!tolerance.finest && trail.value.length >= 3) {
@@ -185,6 +202,31 @@ function settle(
       if (result.converged && (point === undefined || result.resolvent.converged)) return { result };
     }
   }
+}
+
+/** The plain result with the extrapolated value in its place. */
+function extrapolated(
+  plain: DeterminantWithResolvent,
+  history: readonly OrderedValue[],
+  tolerance: Tolerance,
+  truncation: Truncation,
+): DeterminantWithResolvent {
+  const { value, error: own } = extrapolateKink(history);
+  const error = own + truncation.error * Math.abs(value);
+  const judged = (x: number): Estimate => ({
+    value: x,
+    error,
+    errorKind: "estimate",
+    converged: error <= Math.max(tolerance.absolute, tolerance.relative * Math.abs(x)),
+    order: plain.order,
+  });
+  return {
+    ...judged(value),
+    logAbs: Math.log(Math.abs(value)),
+    sign: Math.sign(value),
+    complement: judged(1 - value),
+    resolvent: plain.resolvent,
+  };
 }
 
 /** Whether what is left is rounding, or the differences have stopped falling just above it. */

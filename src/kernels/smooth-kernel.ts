@@ -22,7 +22,7 @@ export interface SmoothKernelOptions {
  * Makes a kernel from K(x, y).
  *
  * The determinant converges as fast as the kernel is smooth: exponentially for analytic kernels, like n⁻² when the
- * first derivative jumps across the diagonal. Cost of order n: n² evaluations and n³/3 multiply–adds.
+ * first derivative jumps across the diagonal, which the engine extrapolates. Cost of order n: n² evaluations and n³/3 multiply–adds.
  *
  * @param evaluate - K(x, y), finite on the domain.
  * @param options - What else is known.

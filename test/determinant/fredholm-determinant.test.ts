@@ -47,25 +47,38 @@ describe("fredholmDeterminant", () => {
   });
 
   // F. Bornemann, Math. Comp. 79 (2010) 871: the Green kernel, det(I − zK) = sin √z / √z.
-  it("gives sin √z / √z for min(x, y)(1 − max(x, y)), slowly, and says so", () => {
+  it("gives sin √z / √z for min(x, y)(1 − max(x, y)), whose kink leaves n⁻², by extrapolation", () => {
     const green = smoothKernel((x, y) => Math.min(x, y) * (1 - Math.max(x, y)), { symmetric: true });
-    let before = Number.POSITIVE_INFINITY;
-    for (const maxOrder of [40, 90, 200, 500]) {
-      for (const z of [1, 2.5, -4]) {
-        const w = Math.sqrt(Math.abs(z));
-        const exact = z > 0 ? Math.sin(w) / w : Math.sinh(w) / w;
-        const found = fredholmDeterminant(green, interval(0, 1), { z, maxOrder });
-        expect(found.converged).toBe(false);
-        const error = Math.abs(found.value - exact);
-        expect(error).toBeLessThanOrEqual(found.error);
-        expect(found.error).toBeLessThan(100 * error);
-        if (z === 1) {
-          expect(error).toBeLessThan(before / 2);
-          before = error;
-        }
-      }
+    for (const z of [1, 2.5, 9, 30, -4]) {
+      const w = Math.sqrt(Math.abs(z));
+      const exact = z > 0 ? Math.sin(w) / w : Math.sinh(w) / w;
+      const found = fredholmDeterminant(green, interval(0, 1), { z });
+      const error = Math.abs(found.value - exact);
+      expect(error, `z = ${z}`).toBeLessThanOrEqual(found.error);
+      expect(error, `z = ${z}`).toBeLessThan(2e-13);
+      expect(found.order).toBeLessThan(200);
+      expect(Math.abs(found.logAbs - Math.log(Math.abs(exact)))).toBeLessThan(2e-12);
+      expect(Math.abs(found.complement.value - (1 - exact))).toBeLessThanOrEqual(
+        found.complement.error + 2e-16,
+      );
+      const loose = fredholmDeterminant(green, interval(0, 1), { z, absTol: 1e-6 });
+      expect(loose.converged).toBe(true);
+      expect(loose.order).toBeLessThan(found.order);
+      expect(Math.abs(loose.value - exact)).toBeLessThanOrEqual(loose.error);
     }
-    expect(fredholmDeterminant(green, interval(0, 1), { absTol: 1e-4 }).converged).toBe(true);
+    expect(Math.abs(fredholmDeterminant(green, interval(0, 1)).value - Math.sin(1))).toBeLessThan(1e-14);
+  });
+
+  it("reports slow convergence: a singular kernel of rank one, det = 1 − 2z", () => {
+    const singular = smoothKernel((x, y) => (x * y) ** -0.25, { symmetric: true });
+    for (const z of [0.25, -1]) {
+      const found = fredholmDeterminant(singular, interval(0, 1), { z, maxOrder: 200 });
+      expect(found.converged).toBe(false);
+      const error = Math.abs(found.value - (1 - 2 * z));
+      expect(error).toBeGreaterThan(1e-5);
+      expect(error).toBeLessThanOrEqual(found.error);
+      expect(found.error).toBeLessThan(100 * error);
+    }
   });
 
   it("keeps the relative accuracy of a small complement: 1 − F2(8) and 1 − F2(30)", () => {

@@ -6,7 +6,7 @@ import { type DeterminantOptions, fredholmDeterminant } from "../../src/determin
 import fixture from "../fixtures/known-determinants.json" with { type: "json" };
 import { buildCase, type KnownCase } from "./known-cases.ts";
 
-// Kernels with a kink on the diagonal converge like n⁻²: they end at the largest order, which is kept small here.
+// Kernels with a kink on the diagonal are extrapolated; a small largest order keeps their dense matrices cheap.
 const KINKED = ["green", "brownian", "ornstein"];
 
 describe("stated errors of fredholmDeterminant", () => {
