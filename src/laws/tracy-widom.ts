@@ -230,14 +230,29 @@ function rescaled(core: LawCore, factor: readonly [number, number], about: Descr
     support: core.support,
     accuracy: { ...core.accuracy, pdfAbsolute: core.accuracy.pdfAbsolute * head },
     exact(what, x, options) {
-      const [h] = argument(x);
+      const [h, l] = argument(x);
       const found = core.exact(what, h, options);
-      if (what === "pdf")
-        return { ...found, value: head * found.value, error: head * found.error * (1 + 2 ** -51) };
-      if (what === "logPdf") return { ...found, value: found.value + Math.log(head) };
-      return found;
+      // The tail l of the argument moves the value by l times its slope.
+      if (what === "cdf") return moved(found, l * core.pdf(h));
+      if (what === "survival") return moved(found, -l * core.pdf(h));
+      if (what === "logCdf") return moved(found, l * Math.exp(core.logPdf(h) - core.logCdf(h)));
+      if (what === "logSurvival") return moved(found, -l * Math.exp(core.logPdf(h) - core.logSurvival(h)));
+      // (log pdf)' is between −2√s and s²/4, to leading order; here it only enters the error.
+      const slope = Math.abs(l) * (2 * Math.sqrt(Math.abs(h)) + (h * h) / 4 + 1);
+      if (what === "logPdf") {
+        const value = found.value + Math.log(head);
+        return { ...found, value, error: found.error + slope + 2 ** -52 * Math.abs(value) };
+      }
+      const error = head * (found.error + Math.abs(found.value) * slope) * (1 + 2 ** -51);
+      return { ...found, value: head * found.value, error };
     },
   };
+}
+
+/** An estimate shifted by a small correction, whose own error is a rounding. */
+function moved(found: Estimate, by: number): Estimate {
+  if (by === 0 || !Number.isFinite(found.value)) return found;
+  return { ...found, value: found.value + by, error: found.error + 2 ** -40 * Math.abs(by) };
 }
 
 /** x·y − fl(x·y), by Dekker's splitting (T. J. Dekker, Numer. Math. 18 (1971) 224). */

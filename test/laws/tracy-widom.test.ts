@@ -130,6 +130,35 @@ describe("tracyWidom: the figures the reports rest on", () => {
     }
   });
 
+  it("has an exact route for the rescaled laws that knows the rounding of the argument", () => {
+    // 30/√2 and its like are no doubles: the reference at 30 is reached by one Taylor step from the double next to it.
+    const row = fixture.grid.find((item) => item.s === "30");
+    if (row === undefined) throw new Error("the grid has no point 30");
+    const hazard = Number(row.beta4_G.pdf) / Number(row.beta4_G.survival);
+    for (const [scaling, factor, tail] of [
+      ["standard", Math.SQRT2, -9.667293313452913e-17],
+      ["stochastic-airy", 1.5874010519681996, -1.0869008194197823e-16],
+    ] as const) {
+      const law = tracyWidom(4, { scaling });
+      const x = 30 / factor;
+      // factor · x − 30, exactly: x and the factor as ratios of big integers.
+      const bits = 2 ** 52;
+      const product = BigInt(factor * bits) * BigInt(x * bits) - 30n * BigInt(bits) ** 2n;
+      const off = Number(product) / bits / bits + tail * x;
+      const expected = Number(row.beta4_G.survival) * (1 - hazard * off);
+      const found = law.estimate("survival", x);
+      expect(Math.abs(found.value - expected)).toBeLessThanOrEqual(found.error + 1e-16 * expected);
+      expect(Math.abs(law.survival(x) / expected - 1)).toBeLessThan(2e-14);
+      expect(found.error).toBeLessThan(1e-14 * expected);
+      for (const what of ["pdf", "logPdf", "logSurvival", "cdf", "logCdf"] as const) {
+        const exact = law.estimate(what, x);
+        expect(Math.abs(exact.value - law[what](x)), what).toBeLessThanOrEqual(
+          exact.error + 2e-14 * Math.abs(exact.value),
+        );
+      }
+    }
+  });
+
   // I. M. Johnstone, Ann. Statist. 29 (2001) 295, Table 1: percentage points of F1, printed to two decimals.
   it.each([
     [-3.9, 0.01],
