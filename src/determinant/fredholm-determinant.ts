@@ -299,21 +299,31 @@ function assemble(
     const converged = error <= Math.max(tolerance.absolute, tolerance.relative * Math.abs(value));
     return { value, error, errorKind: "estimate", converged, order };
   };
-  const nearOne = Math.abs(current.complement) < 0.5;
-  const value = nearOne ? 1 - current.complement : current.value;
-  const main = estimate(value, current.noise, trail.value, truncation.error * Math.abs(value));
+  const complement = estimate(
+    current.complement,
+    current.complementNoise,
+    trail.complement,
+    truncation.error * scale,
+  );
+  const main =
+    c < 0.5
+      ? valueFromComplement(complement, tolerance)
+      : estimate(current.value, current.noise, trail.value, truncation.error * Math.abs(current.value));
   return {
     ...main,
     logAbs: current.logAbs,
     sign: current.sign,
-    complement: estimate(
-      current.complement,
-      current.complementNoise,
-      trail.complement,
-      truncation.error * scale,
-    ),
+    complement,
     resolvent: estimate(current.resolvent, current.resolventNoise, trail.resolvent, truncation.error),
   };
+}
+
+/** det = 1 − complement: the error of the complement and one rounding. */
+function valueFromComplement(complement: Estimate, tolerance: Tolerance): Estimate {
+  const value = 1 - complement.value;
+  const error = complement.error + 2 ** -53 * Math.abs(value);
+  const converged = error <= Math.max(tolerance.absolute, tolerance.relative * Math.abs(value));
+  return { ...complement, value, error, converged };
 }
 
 /** The determinant at the order asked for; its error is its distance from the refined one, plus that one's error. */

@@ -27,6 +27,8 @@ const MOST_POINTS = 9;
 const LEAST_POINTS = 5;
 const DEVIATION = 0.1; // by how much the last ratios of differences may miss those of the first term
 const SAFETY = 100;
+// The corrections that judge an extrapolation carry the same rounding noise as its value, and the best is chosen by them.
+const NOISE_FACTOR = 3;
 
 /** Whether the last determinants approach their limit as c (n + ½)^−2 does. */
 export function convergesLikeKink(history: readonly OrderedValue[]): boolean {
@@ -58,7 +60,7 @@ export function extrapolateKink(history: readonly OrderedValue[]): Extrapolated 
     const found = readAtZero(history.slice(-count));
     const difference = Math.abs(found.value - before.value);
     // A correction that is small by chance is not believed: the one before counts half.
-    const error = SAFETY * Math.max(difference, 0.5 * correction) + found.noise;
+    const error = SAFETY * Math.max(difference, 0.5 * correction) + NOISE_FACTOR * found.noise;
     if (count > 3 && error < best.error) best = { value: found.value, error };
     correction = difference;
     before = found;

@@ -24,7 +24,7 @@ export interface Discretized extends PivotSummary {
 const EPS = 2 ** -53;
 // A pivot below this many roundings of the matrix is noise.
 const NOISE_PIVOT = 4;
-// Safety factors of the rounding model, set so that no case of the honesty sweep comes within a factor 1.5.
+// Safety factors of the rounding model, set on sweeps of determinants with known values (docs/accuracy.md).
 const ENTRY_FACTOR = 2; // entries of the matrix
 const SHIFT_FACTOR = 12; // rounding of nodes far from the origin
 const COMMON_FACTOR = 2; // errors that do not average out along the diagonal
