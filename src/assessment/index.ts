@@ -6,7 +6,7 @@
 export { InvalidArgumentError, InvalidDataError } from "../core/errors.ts";
 export { andersonDarlingLimitSurvival } from "./anderson-darling.ts";
 export { formatPValue } from "./format-p-value.ts";
-export { kolmogorovSurvival, type Probability } from "./kolmogorov-smirnov.ts";
+export { kolmogorovSurvival } from "./kolmogorov-smirnov.ts";
 export {
   type ConstantsChoice,
   largestRootTest,
@@ -25,3 +25,4 @@ export {
   type SampleTestResult,
   sampleTest,
 } from "./sample-test.ts";
+export type { Probability, TailProbability } from "./tail-probability.ts";

@@ -8,10 +8,11 @@
  * (I. M. Johnstone, Proc. ICM Madrid 2006, 307; Z. Ma, Bernoulli 18 (2012) 322); classical: n − 1 and p in their
  * places (I. M. Johnstone, Ann. Statist. 29 (2001) 295). Complex: n and p themselves, whose error already falls like
  * n^{−2/3} (N. El Karoui, Ann. Probab. 34 (2006) 2077 for the rate; these constants from memory, checked against
- * exact finite-size values in the tests).
+ * exact values: from n = 16 to 32 the error falls by 2^0.74, 2^0.72, 2^0.67 for p = n, 2n, 4n).
  */
 import { requireBetween, requireInteger } from "../core/check.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
+import type { LawProvenance } from "../laws/law.ts";
 import { tracyWidom } from "../laws/tracy-widom.ts";
 
 /** Centring and scaling of the largest root. */
@@ -22,13 +23,20 @@ export interface RootConstants {
   readonly formula: string;
 }
 
+const MOST_STATISTIC = 1e100; // beyond it the logarithm of the p-value nears the end of the range of a double
+
 /** Which constants. */
 export type ConstantsChoice = "second-order" | "classical";
 
 /**
- * Centring and scaling for n degrees of freedom and p variables.
+ * Centring and scaling of n λ₁/τ² for n degrees of freedom and p variables.
  *
- * @throws {@link InvalidArgumentError} unless n ≥ 2 and p ≥ 1 are integers.
+ * @param n - Degrees of freedom, ≥ 2: observations, less one if the means were removed. The n − 1 and n − ½ of the
+ *   formulas come on top of that.
+ * @param p - Variables, ≥ 1.
+ * @param complex - Whether the data are complex; then both choices are the same.
+ * @param choice - `"second-order"` or `"classical"`.
+ * @throws {@link InvalidArgumentError} unless n ≥ 2 and p ≥ 1 are integers and the others are as stated.
  */
 export function rootConstants(
   n: number,
@@ -38,6 +46,8 @@ export function rootConstants(
 ): RootConstants {
   requireInteger("n", n, 2, 1e9);
   requireInteger("p", p, 1, 1e9);
+  if (typeof complex !== "boolean") throw new InvalidArgumentError("complex", "true or false", complex);
+  requireChoice("choice", choice);
   const [a, b, formula] = complex
     ? [n, p, "μ = (√n + √p)², σ = (√n + √p)(1/√n + 1/√p)^(1/3)"]
     : choice === "classical"
@@ -55,11 +65,15 @@ export interface RootTestInput {
   readonly n: number;
   /** Number of variables. */
   readonly p: number;
+  /** Whether they come from complex data; a `CovarianceSpectrum` says so itself. */
+  readonly complex?: boolean;
+  /** Whether every column was scaled to unit variance; a `CovarianceSpectrum` says so itself. */
+  readonly scaled?: boolean;
 }
 
 /** Options of {@link largestRootTest}. */
 export interface RootTestOptions {
-  /** Whether the data are complex (β = 2). Default false. */
+  /** Whether the data are complex (β = 2). Default: as `input.complex` says, else false. */
   readonly complex?: boolean;
   /** Centring and scaling. Default `"second-order"`. */
   readonly constants?: ConstantsChoice;
@@ -106,6 +120,8 @@ export interface RootTestResult {
   readonly lawSymbol: "F1" | "F2";
   readonly constants: ConstantsChoice;
   readonly formula: string;
+  /** Formula, source and convention of the law. */
+  readonly lawProvenance: LawProvenance;
   /** min(n, p)^(−2/3): the order of the difference between the limit law and the finite one. */
   readonly finiteSizeOrder: number;
   /** What the p-values rest on, in sentences. */
@@ -121,15 +137,18 @@ export interface RootTestResult {
  * @param input - Eigenvalues with n and p.
  * @param options - Field, constants, level, number of components, noise variance.
  * @throws {@link InvalidArgumentError} naming what is wrong: negative, unsorted, too many or (when the noise variance has
- *   to be estimated) too few eigenvalues, n or p out of range.
+ *   to be estimated) too few eigenvalues, n or p out of range, a statistic beyond 1e100.
  */
 export function largestRootTest(input: RootTestInput, options: RootTestOptions = {}): RootTestResult {
-  const { eigenvalues, n, p } = input;
-  const complex = options.complex ?? false;
-  const choice = options.constants ?? "second-order";
-  if (choice !== "second-order" && choice !== "classical") {
-    throw new InvalidArgumentError("options.constants", '"second-order" or "classical"', choice);
+  if (typeof input !== "object" || input === null) {
+    throw new InvalidArgumentError("input", "eigenvalues with n and p", input);
   }
+  if (typeof options !== "object" || options === null) {
+    throw new InvalidArgumentError("options", "an object", options);
+  }
+  const { eigenvalues, n, p } = input;
+  const complex = fieldOf(input, options);
+  const choice = requireChoice("options.constants", options.constants ?? "second-order");
   const level = requireBetween("options.level", options.level ?? 0.05, 0, 1);
   const known = options.noiseVariance;
   if (known !== undefined && !(known > 0 && Number.isFinite(known))) {
@@ -149,6 +168,10 @@ export function largestRootTest(input: RootTestInput, options: RootTestOptions =
     if (!(noiseVariance > 0)) break; // nothing but zeros is left
     const { centre, scale } = rootConstants(n, p - j, complex, choice);
     const statistic = ((n * eigenvalue) / noiseVariance - centre) / scale;
+    if (!(Math.abs(statistic) <= MOST_STATISTIC)) {
+      const expected = `a statistic (n λ / τ² − μ) / σ within ±${MOST_STATISTIC}`;
+      throw new InvalidArgumentError(`eigenvalues[${j}]`, expected, eigenvalue);
+    }
     const tail = law.estimate("survival", statistic);
     significantSoFar = significantSoFar && tail.value <= level;
     steps.push({
@@ -177,15 +200,36 @@ export function largestRootTest(input: RootTestInput, options: RootTestOptions =
     constants: choice,
     formula: rootConstants(n, p, complex, choice).formula,
     finiteSizeOrder: Math.min(n, p) ** (-2 / 3),
-    assumptions: assumptions(n, p, complex, known === undefined),
+    lawProvenance: law.provenance,
+    assumptions: assumptions(input, complex, known === undefined),
   };
+}
+
+/** Whether the data are complex, by the option or by the input; they must not contradict each other. */
+function fieldOf(input: RootTestInput, options: RootTestOptions): boolean {
+  const complex = options.complex ?? input.complex ?? false;
+  if (typeof complex !== "boolean") {
+    throw new InvalidArgumentError("options.complex", "true or false", complex);
+  }
+  if (input.complex !== undefined && input.complex !== complex) {
+    throw new InvalidArgumentError("options.complex", `${input.complex}, as the data are`, complex);
+  }
+  return complex;
+}
+
+function requireChoice(argument: string, choice: ConstantsChoice): ConstantsChoice {
+  if (choice !== "second-order" && choice !== "classical") {
+    throw new InvalidArgumentError(argument, '"second-order" or "classical"', choice);
+  }
+  return choice;
 }
 
 function checkEigenvalues(eigenvalues: readonly number[], most: number, complete: boolean): void {
   if (!Array.isArray(eigenvalues) || eigenvalues.length === 0) {
     throw new InvalidArgumentError("eigenvalues", "a non-empty array of numbers", eigenvalues);
   }
-  eigenvalues.forEach((value, i) => {
+  for (let i = 0; i < eigenvalues.length; i++) {
+    const value = eigenvalues[i];
     if (typeof value !== "number" || !Number.isFinite(value) || value < 0) {
       throw new InvalidArgumentError(`eigenvalues[${i}]`, "a finite number ≥ 0", value);
     }
@@ -196,7 +240,7 @@ function checkEigenvalues(eigenvalues: readonly number[], most: number, complete
         value,
       );
     }
-  });
+  }
   if (eigenvalues.length > most) {
     throw new InvalidArgumentError("eigenvalues", `at most min(n, p) = ${most} numbers`, eigenvalues);
   }
@@ -217,7 +261,7 @@ function remainingMean(eigenvalues: readonly number[], removed: number, p: numbe
   return sum / (p - removed);
 }
 
-function assumptions(n: number, p: number, complex: boolean, estimated: boolean): string[] {
+function assumptions({ n, p, scaled }: RootTestInput, complex: boolean, estimated: boolean): string[] {
   const order = (Math.min(n, p) ** (-2 / 3)).toPrecision(2);
   const out = [
     `Rows are independent Gaussian vectors${complex ? " (circular complex)" : ""}; the null hypothesis is white noise of one variance in all ${p} variables.`,
@@ -225,8 +269,18 @@ function assumptions(n: number, p: number, complex: boolean, estimated: boolean)
     "Component j is compared with the largest root of p − j + 1 variables (conservative, common practice); the p-values are not corrected for several tests beyond stopping at the first one above the level.",
   ];
   if (estimated) {
+    // Simulated, 4000 samples a size: 5 % tests of pure noise reject 0.4 % at 10 × 5, 2.1 % at 40 × 12, 3.4 % at 100 × 20.
     out.push(
-      "The noise variance is the mean of the eigenvalues not yet removed, the tested one among them; that makes the tests conservative when there is structure.",
+      "The noise variance is the mean of the eigenvalues not yet removed, the tested one among them; that makes the tests conservative, markedly so for few variables.",
+    );
+  }
+  if (scaled === true) {
+    out.push(
+      "The columns were scaled to unit variance: for correlation matrices the law, derived for covariance matrices, holds only nearly (common practice).",
+    );
+  } else if (scaled === undefined) {
+    out.push(
+      "The eigenvalues are taken to be those of a covariance matrix; for a correlation matrix the law holds only nearly (common practice).",
     );
   }
   if (Math.min(n, p) < 5) out.push("min(n, p) is below 5: the limit law is hardly usable.");

@@ -1,6 +1,7 @@
 /**
  * Reads a table of numbers from CSV text (RFC 4180): rows are observations, columns variables. The first row is a
- * header when none of its cells is a number. Cells may be complex: `1.5-2i`.
+ * header when at least one of its cells is a name and none is a number or stands for one (`NaN`, `inf`, `1e999`): a bad
+ * first row of data is refused, not passed over as names. Cells may be complex: `1.5-2i`.
  */
 import { parse } from "csv-parse/browser/esm/sync";
 import { InvalidArgumentError, InvalidDataError } from "../core/errors.ts";
@@ -21,7 +22,7 @@ export interface NumericTable {
 
 /** Options of {@link readNumericTable}. */
 export interface NumericTableOptions {
-  /** Character between cells. Default: `,`. */
+  /** Character between cells, not one that numbers, quotes or lines are written with. Default: `,`. */
   readonly delimiter?: string;
 }
 
@@ -35,13 +36,20 @@ export interface NumericTableOptions {
  */
 export function readNumericTable(text: string, options: NumericTableOptions = {}): NumericTable {
   if (typeof text !== "string") throw new InvalidArgumentError("text", "a string of CSV text", text);
+  if (typeof options !== "object" || options === null) {
+    throw new InvalidArgumentError("options", "an object", options);
+  }
   const delimiter = options.delimiter ?? ",";
-  if (typeof delimiter !== "string" || delimiter.length !== 1) {
-    throw new InvalidArgumentError("options.delimiter", "one character", delimiter);
+  if (typeof delimiter !== "string" || delimiter.length !== 1 || NOT_A_DELIMITER.test(delimiter)) {
+    throw new InvalidArgumentError(
+      "options.delimiter",
+      "one character that is no letter, digit, point, sign, quote or line break",
+      delimiter,
+    );
   }
   const records = split(text, delimiter);
   if (records.length === 0) throw new InvalidDataError("data", "at least one row of numbers", "empty text");
-  const header = records[0].every((cell) => parseCell(cell) === undefined) ? records[0] : undefined;
+  const header = isHeader(records[0]) ? records[0] : undefined;
   const body = header === undefined ? records : records.slice(1);
   if (body.length === 0) throw new InvalidDataError("data", "at least one row of numbers", "only a header");
   const columns = records[0].length;
@@ -71,6 +79,17 @@ export function readNumericTable(text: string, options: NumericTableOptions = {}
     });
   });
   return { rows: body.length, columns, header, real, imaginary: complex ? imaginary : undefined };
+}
+
+const NOT_A_DELIMITER = /[A-Za-z0-9.+\-"\r\n]/;
+/** Marks of a missing value: no name. */
+const MISSING = /^(?:|[+-]?nan|na|n\/a|null|none|-+|\?)$/i;
+const NOT_FINITE = /^[+-]?(?:nan|inf|infinity)$/i;
+
+function isHeader(cells: readonly string[]): boolean {
+  const numeric = (cell: string): boolean =>
+    NOT_FINITE.test(cell) || REAL.test(cell) || IMAGINARY.test(cell) || COMPLEX.test(cell);
+  return cells.some((cell) => !MISSING.test(cell)) && !cells.some(numeric);
 }
 
 function split(text: string, delimiter: string): string[][] {

@@ -169,7 +169,7 @@ function settle(
   let n = Math.min(FIRST_ORDER, Math.max(1, Math.floor(maxOrder / 2)));
   let current = at(n);
   const trail: Trail = { value: [], complement: [], resolvent: [] };
-  const history: OrderedValue[] = [{ order: n, value: current.value, noise: current.noise }];
+  const history: OrderedValue[] = [orderedValue(n, current)];
   // A mapped half-line may converge like n⁻² for another reason, its end.
   const bounded = truncation.panels.every((panel) => !panel.mapped);
   let kinked: DeterminantWithResolvent | undefined; // the best extrapolated result, for kernels with a kink
@@ -184,7 +184,7 @@ function settle(
     trail.resolvent.push(Math.abs(refined.resolvent - current.resolvent));
     n = next;
     current = refined;
-    history.push({ order: n, value: current.value, noise: current.noise });
+    history.push(orderedValue(n, current));
     if (trail.value.length < 2) continue;
     if (point === undefined && bounded && convergesLikeKink(history)) {
       const plain = assemble(current, n, trail, tolerance, truncation, false);
@@ -202,6 +202,13 @@ function settle(
       if (result.converged && (point === undefined || result.resolvent.converged)) return { result };
     }
   }
+}
+
+/** A determinant for extrapolation, by the route with fewer roundings: near 1 from its complement. */
+function orderedValue(order: number, at: Discretized): OrderedValue {
+  if (Math.abs(at.complement) >= 0.5) return { order, value: at.value, noise: at.noise };
+  const value = 1 - at.complement;
+  return { order, value, noise: at.complementNoise + 2 ** -53 * value };
 }
 
 /** The plain result with the extrapolated value in its place. */

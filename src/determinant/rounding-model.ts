@@ -108,7 +108,8 @@ export function withNoise(
     sign: summary.sign,
     smallestPivot: summary.smallestPivot,
     largestPivot: summary.largestPivot,
-    noise: relative * value + EPS * (value + Math.min(1, Math.abs(summary.complement))),
+    // The product of n pivots has n roundings of its own.
+    noise: relative * value + EPS * (Math.sqrt(pivots) * value + Math.min(1, Math.abs(summary.complement))),
     complementNoise,
     resolvent,
     resolventNoise: Math.abs(resolvent) * (relative + 4 * unit),

@@ -21,12 +21,11 @@ export interface SampleReportOptions extends ReportOptions {
 const DIGITS = 6;
 
 function pValueOf(test: DistanceTest): Measured {
-  const relative = test.pValue > 0 ? test.pValueError / test.pValue : Number.POSITIVE_INFINITY;
   return {
     value: test.pValue,
     error: test.pValueError,
     errorKind: "estimate",
-    ...(Number.isFinite(test.logPValue) ? { logValue: test.logPValue, logError: relative } : {}),
+    ...(Number.isFinite(test.logPValue) ? { logValue: test.logPValue, logError: test.logPValueError } : {}),
   };
 }
 
