@@ -10,6 +10,8 @@ import { cpus } from "node:os";
 import Complex from "complex.js";
 import { LuDecomposition, Matrix } from "ml-matrix";
 import { seededGenerator } from "../src/core/random.ts";
+import type { Arithmetic } from "../src/core/web-assembly.ts";
+import { Workspace } from "../src/core/workspace.ts";
 import { discretizedDeterminant } from "../src/determinant/discretized.ts";
 import { fredholmDeterminant } from "../src/determinant/fredholm-determinant.ts";
 import { airyKernel } from "../src/kernels/airy-kernel.ts";
@@ -21,6 +23,7 @@ import { eliminateStructuredSymmetric } from "../src/linalg/structured-symmetric
 import { halfLine } from "../src/quadrature/domain.ts";
 import { gaussLegendreShared } from "../src/quadrature/gauss-legendre.ts";
 import { airyPairInto, airySquareIntegralFrom } from "../src/special/airy.ts";
+import { airySquareIntegralInto } from "../src/special/airy-square-integral.ts";
 import { accuracyRows } from "./accuracy.ts";
 import { showTime, time } from "./timing.ts";
 
@@ -40,23 +43,28 @@ interface Peer {
 }
 
 /** F2(s) with n nodes on [s, s + 10] and preallocated arrays: samples, elimination, complement; no error estimate. */
-function fixedOrder(n: number): (s: number, length?: number) => { value: number; logAbs: number } {
-  const x = new Float64Array(n);
-  const a = new Float64Array(n);
-  const b = new Float64Array(n);
-  const e = new Float64Array(n);
+function fixedOrder(
+  n: number,
+  arithmetic: Arithmetic,
+): (s: number, length?: number) => { value: number; logAbs: number } {
+  const workspace = Workspace.borrow(4 * (n + 1), arithmetic); // never given back
+  const x = workspace.take(n);
+  const a = workspace.take(n);
+  const b = workspace.take(n);
+  const e = workspace.take(n);
   const { nodes, weights } = gaussLegendreShared(n);
   return (s, length = 10) => {
     for (let i = 0; i < n; i++) x[i] = s + 0.5 * length * (1 + nodes[i]);
-    airyPairInto(x, a, b, n);
+    airyPairInto(x, a, b, n, arithmetic);
+    airySquareIntegralInto(x, a, b, e, n, arithmetic);
     for (let i = 0; i < n; i++) {
       const w = 0.5 * length * weights[i];
       const root = Math.sqrt(w);
-      e[i] = w * airySquareIntegralFrom(x[i], a[i], b[i]);
+      e[i] *= w;
       a[i] *= root;
       b[i] *= root;
     }
-    eliminateStructuredSymmetric(x, a, b, e, n, n, 0);
+    eliminateStructuredSymmetric(x, a, b, e, n, n, 0, arithmetic);
     return summarizePivots(e, n);
   };
 }

@@ -7,6 +7,7 @@
 export { InvalidArgumentError, InvalidDataError } from "./core/errors.ts";
 export type { Estimate } from "./core/estimate.ts";
 export { seededGenerator, type UniformGenerator } from "./core/random.ts";
+export type { Arithmetic } from "./core/web-assembly.ts";
 export {
   type DeterminantEstimate,
   type DeterminantOptions,

@@ -34,7 +34,7 @@ import {
  * The determinant on `order` points a panel.
  *
  * @param extra - A point at which the resolvent is wanted as well.
- * @param workspace - Work space that successive orders share.
+ * @param workspace - Work space that successive orders share; says which arithmetic to use.
  */
 export function discretizedDeterminant(
   kernel: Kernel,
@@ -56,7 +56,7 @@ function pairDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
   const a = workspace.take(rows);
   const b = workspace.take(rows);
   const e = workspace.take(rows);
-  kernel.sample(nodes, rows, [a, b], [], e);
+  kernel.sample(nodes, rows, [a, b], [], e, workspace.arithmetic);
   const size = newSize();
   for (let i = 0; i < rows; i++) {
     const root = roots[i];
@@ -77,7 +77,7 @@ function pairDeterminant(scene: Scene, kernel: IntegrableKernel): Discretized {
   const positive = kernel.contraction && Math.abs(z) <= 1;
   size.square = size.diagonal;
   const least = positive ? leastPivot(size) : 1e-3;
-  const done = eliminateStructuredSymmetric(nodes, a, b, e, pivots, rows, least);
+  const done = eliminateStructuredSymmetric(nodes, a, b, e, pivots, rows, least, workspace.arithmetic);
   if (done === pivots) return withNoise(scene, summarizePivots(e, pivots), e, size, kernel.evaluationError);
   if (positive) return exhausted(scene, size, summarizePivots(e, done).largestPivot, least);
   // Not positive definite: nothing guards the pivots in their natural order, so the matrix is formed and exchanged.

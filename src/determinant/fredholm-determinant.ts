@@ -8,6 +8,7 @@
 import { requireFinite, requireInteger, requireNonNegative } from "../core/check.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
 import type { Estimate } from "../core/estimate.ts";
+import { type Arithmetic, requireArithmetic } from "../core/web-assembly.ts";
 import { Workspace } from "../core/workspace.ts";
 import { type Domain, partsOf } from "../quadrature/domain.ts";
 import { quadratureError, quiet } from "./convergence.ts";
@@ -29,6 +30,11 @@ export interface DeterminantOptions {
   readonly order?: number;
   /** Most points a panel that refinement may use. Default 4096 for generators, 512 for a formula. */
   readonly maxOrder?: number;
+  /**
+   * Compiled (`"wasm"`) or plain loops; results are the same, bit for bit. Default `"automatic"`: compiled where
+   * WebAssembly with 128-bit lanes can be had and pays.
+   */
+  readonly arithmetic?: Arithmetic;
 }
 
 /** A determinant with its error, logarithm, sign and complement. */
@@ -128,21 +134,21 @@ function refine(
     options.maxOrder === undefined ? cap : requireInteger("options.maxOrder", options.maxOrder, 1, limit);
   const order =
     options.order === undefined ? undefined : requireInteger("options.order", options.order, 1, limit);
+  const arithmetic = requireArithmetic("options.arithmetic", options.arithmetic);
   const truncation = truncate(partsOf(domain), kernel, z);
   if (z === 0) return { ...exactlyOne(), resolvent: exact(0) };
-  const workspace = new Workspace(512);
-  const at = (n: number): Discretized =>
-    discretizedDeterminant(kernel, truncation.panels, n, z, point, workspace);
-  if (order === undefined) return settle(at, maxOrder, tolerance, truncation, point).result;
-  const asked = at(order);
-  const best = settle(
-    at,
-    Math.max(maxOrder, Math.min(2 * order, limit)),
-    { ...tolerance, finest: true },
-    truncation,
-    point,
-  );
-  return fixedOrder(asked, order, best.result, tolerance);
+  const workspace = Workspace.borrow(512, arithmetic);
+  try {
+    const at = (n: number): Discretized =>
+      discretizedDeterminant(kernel, truncation.panels, n, z, point, workspace);
+    if (order === undefined) return settle(at, maxOrder, tolerance, truncation, point).result;
+    const asked = at(order);
+    const most = Math.max(maxOrder, Math.min(2 * order, limit));
+    const best = settle(at, most, { ...tolerance, finest: true }, truncation, point);
+    return fixedOrder(asked, order, best.result, tolerance);
+  } finally {
+    workspace.release();
+  }
 }
 
 function exact(value: number): Estimate {

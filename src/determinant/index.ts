@@ -5,6 +5,7 @@
  */
 export { InvalidArgumentError } from "../core/errors.ts";
 export type { Estimate } from "../core/estimate.ts";
+export type { Arithmetic } from "../core/web-assembly.ts";
 export {
   type ComplexDeterminantEstimate,
   type ComplexDeterminantOptions,

@@ -5,6 +5,7 @@
  * diagonal limit (A. Its, A. Izergin, V. Korepin, N. Slavnov, Int. J. Mod. Phys. B 4 (1990) 1003). A smooth kernel
  * is only its formula.
  */
+import type { Arithmetic } from "../core/web-assembly.ts";
 
 /** How fast a kernel dies out towards +∞, for truncating half-lines. */
 export interface Decay {
@@ -46,6 +47,7 @@ export interface IntegrableKernel extends KernelTraits {
    * @param left - left[k][i] receives f_k(x_i).
    * @param right - right[k][i] receives g_k(x_i); empty for an antisymmetric pair.
    * @param diagonal - Receives K(x_i, x_i).
+   * @param arithmetic - For kernels with compiled loops; the others ignore it.
    */
   sample(
     nodes: Float64Array,
@@ -53,6 +55,7 @@ export interface IntegrableKernel extends KernelTraits {
     left: readonly Float64Array[],
     right: readonly Float64Array[],
     diagonal: Float64Array,
+    arithmetic?: Arithmetic,
   ): void;
 }
 

@@ -124,7 +124,7 @@ export function sampleGenerators(
   const left = make();
   const right = kernel.antisymmetricPair ? [] : make();
   const e = new Float64Array(scene.rows);
-  kernel.sample(scene.nodes, scene.rows, left, right, e);
+  kernel.sample(scene.nodes, scene.rows, left, right, e, scene.workspace.arithmetic);
   if (kernel.antisymmetricPair) return { left, right: [left[1], left[0].map((f) => -f)], e };
   return { left, right, e };
 }

@@ -4,8 +4,10 @@
  * Source: C. Tracy, H. Widom, "Level-spacing distributions and the Airy kernel", Commun. Math. Phys. 159 (1994) 151,
  * eq. (1.4). det(I − K) on (s, ∞) is F2(s).
  */
+import type { Arithmetic } from "../core/web-assembly.ts";
 import type { IntegrableKernel } from "../determinant/kernel.ts";
-import { airyPairInto, airySquareIntegralFrom } from "../special/airy.ts";
+import { airyPairInto } from "../special/airy.ts";
+import { airySquareIntegralInto } from "../special/airy-square-integral.ts";
 
 /**
  * The Airy kernel, the soft edge of the β = 2 ensembles.
@@ -33,11 +35,12 @@ const AIRY_KERNEL: IntegrableKernel = Object.freeze({
     left: readonly Float64Array[],
     _right: readonly Float64Array[],
     diagonal: Float64Array,
+    arithmetic: Arithmetic = "automatic",
   ): void {
     const ai = left[0];
     const aiPrime = left[1];
-    airyPairInto(nodes, ai, aiPrime, count);
-    for (let i = 0; i < count; i++) diagonal[i] = airySquareIntegralFrom(nodes[i], ai[i], aiPrime[i]);
+    airyPairInto(nodes, ai, aiPrime, count, arithmetic);
+    airySquareIntegralInto(nodes, ai, aiPrime, diagonal, count, arithmetic);
   },
 });
 

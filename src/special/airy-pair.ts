@@ -9,6 +9,7 @@
  */
 import { requireInteger } from "../core/check.ts";
 import { InvalidArgumentError } from "../core/errors.ts";
+import { type Arithmetic, requireArithmetic } from "../core/web-assembly.ts";
 import {
   decayingAi,
   decayingAiPrime,
@@ -19,8 +20,22 @@ import {
   oscillatingPairInto,
   requirePhase,
 } from "./airy-asymptotic.ts";
+import { compiledTable, runPairs } from "./airy-compiled.ts";
 import { scaleUp } from "./airy-exponent.ts";
-import { centre, nearestCentre, TABLE_LIMIT, taylorAi, taylorAiPrime, taylorTable } from "./airy-taylor.ts";
+import {
+  centre,
+  INTERLEAVED_LENGTH,
+  interleaveTable,
+  nearestCentre,
+  TABLE_LIMIT,
+  taylorAi,
+  taylorAiPrime,
+  taylorTable,
+} from "./airy-taylor.ts";
+
+/** From so many points on the compiled form pays. */
+const COMPILED_FROM = 4;
+const compiledPairs = /* @__PURE__ */ compiledTable(INTERLEAVED_LENGTH, interleaveTable);
 
 /**
  * Airy function Ai(x), the solution of w″ = x w that decays as x → +∞.
@@ -42,7 +57,7 @@ import { centre, nearestCentre, TABLE_LIMIT, taylorAi, taylorAiPrime, taylorTabl
  * @since 0.1.0
  */
 export function airyAi(x: number): number {
-  if (x >= -TABLE_LIMIT && x <= TABLE_LIMIT) {
+  if (isTabulated(x)) {
     const j = nearestCentre(x);
     return taylorAi(taylorTable(), j, x - centre(j));
   }
@@ -70,7 +85,7 @@ export function airyAi(x: number): number {
  * @since 0.1.0
  */
 export function airyAiPrime(x: number): number {
-  if (x >= -TABLE_LIMIT && x <= TABLE_LIMIT) {
+  if (isTabulated(x)) {
     const j = nearestCentre(x);
     return taylorAiPrime(taylorTable(), j, x - centre(j));
   }
@@ -103,17 +118,36 @@ export function airyPair(x: number, out: Float64Array): void {
  * @param ai - Receives Ai(x[i]).
  * @param aiPrime - Receives Ai'(x[i]); must not be `ai`. Either may be `x` itself.
  * @param count - Number of points, at most the length of each array.
- * @throws {@link InvalidArgumentError} for a short array, or at the first x[i] < −1e10.
+ * @param arithmetic - Compiled or plain loops; the bits are the same. Default `"automatic"`.
+ * @throws {@link InvalidArgumentError} for a short array, at the first x[i] < −1e10, or for `"wasm"` where that cannot
+ *   be had.
  *
  * **Error.** As {@link airyAi}, {@link airyAiPrime}, the same bits.
- * **Cost.** About 20 ns a pair for |x| ≤ 20.
+ * **Cost.** For |x| ≤ 20 about COST_WASM ns a pair compiled, COST_PLAIN ns plain.
  *
  * @category Special functions
  * @since 0.1.0
  */
-export function airyPairInto(x: Float64Array, ai: Float64Array, aiPrime: Float64Array, count: number): void {
+export function airyPairInto(
+  x: Float64Array,
+  ai: Float64Array,
+  aiPrime: Float64Array,
+  count: number,
+  arithmetic: Arithmetic = "automatic",
+): void {
   requireArrays(x, ai, aiPrime, count);
-  for (let i = 0; i < count; i++) writePair(x[i], ai, i, aiPrime, i);
+  requireArithmetic("arithmetic", arithmetic);
+  const found = count < COMPILED_FROM && arithmetic !== "wasm" ? undefined : compiledPairs(arithmetic);
+  if (found === undefined) {
+    for (let i = 0; i < count; i++) writePair(x[i], ai, i, aiPrime, i);
+    return;
+  }
+  let i = 0;
+  while (i < count) {
+    i = runPairs(found, x, ai, aiPrime, i, count);
+    // The compiled loop stops at a point outside the table.
+    for (; i < count && !isTabulated(x[i]); i++) writePair(x[i], ai, i, aiPrime, i);
+  }
 }
 
 /**
@@ -183,9 +217,13 @@ export function airyPairScaledInto(
   for (let i = 0; i < count; i++) writeScaledPair(x[i], ai, i, aiPrime, i);
 }
 
+function isTabulated(x: number): boolean {
+  return x >= -TABLE_LIMIT && x <= TABLE_LIMIT;
+}
+
 /** Ai(x) into ai[i], Ai'(x) into aiPrime[k]. */
 function writePair(x: number, ai: Float64Array, i: number, aiPrime: Float64Array, k: number): void {
-  if (x >= -TABLE_LIMIT && x <= TABLE_LIMIT) {
+  if (isTabulated(x)) {
     const table = taylorTable();
     const j = nearestCentre(x);
     const t = x - centre(j);

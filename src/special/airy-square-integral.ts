@@ -12,6 +12,9 @@
  *
  * Source: C. Tracy, H. Widom, Commun. Math. Phys. 159 (1994) 151 for the diagonal; DLMF 9.7, 9.11 for the rest.
  */
+import { placeOf } from "../core/linear-memory.ts";
+import type { Arithmetic } from "../core/web-assembly.ts";
+import { compiledTable } from "./airy-compiled.ts";
 import { exponentHead } from "./airy-exponent.ts";
 import { airyAi, airyAiPrime, airyAiScaled } from "./airy-pair.ts";
 import { PAIR_AT_CENTRES, SERIES_R, SQUARE_RATIO_AT_CENTRES } from "./airy-tables.ts";
@@ -21,6 +24,8 @@ import { PER_UNIT, TABLE_LIMIT } from "./airy-taylor.ts";
 const RATIO_DEGREE = 12;
 const STRIDE = RATIO_DEGREE + 1;
 const CENTRES = TABLE_LIMIT * PER_UNIT + 1;
+
+const compiledRatios = /* @__PURE__ */ compiledTable(CENTRES * STRIDE, (out) => out.set(ratioTable()));
 
 let expanded: Float64Array | undefined;
 
@@ -104,6 +109,42 @@ export function airySquareIntegral(x: number): number {
  */
 export function airySquareIntegralFrom(x: number, ai: number, aiPrime: number): number {
   return x >= 0 ? squareRatio(x) * ai * ai : aiPrime * aiPrime - x * ai * ai;
+}
+
+/**
+ * {@link airySquareIntegralFrom} on arrays, without allocation or checks.
+ *
+ * @param x - Points.
+ * @param ai - Ai(x[i]).
+ * @param aiPrime - Ai'(x[i]).
+ * @param out - Receives the integrals; may be one of the others.
+ * @param count - Number of points.
+ * @param arithmetic - Compiled or plain loops, the same bits; compiled only where all arrays are in the memory of the
+ *   compiled part.
+ */
+export function airySquareIntegralInto(
+  x: Float64Array,
+  ai: Float64Array,
+  aiPrime: Float64Array,
+  out: Float64Array,
+  count: number,
+  arithmetic: Arithmetic = "automatic",
+): void {
+  const found = compiledRatios(arithmetic);
+  const px = placeOf(x);
+  const pa = placeOf(ai);
+  const pb = placeOf(aiPrime);
+  const po = placeOf(out);
+  const within = px >= 0 && pa >= 0 && pb >= 0 && po >= 0;
+  let i = 0;
+  while (found !== undefined && within && i < count) {
+    const shift = 8 * i;
+    const left = count - i;
+    i += found.routines.airySquareIntegral(px + shift, pa + shift, pb + shift, po + shift, left, found.table);
+    // It stops at a point outside the table.
+    for (; i < count && !(x[i] <= TABLE_LIMIT); i++) out[i] = airySquareIntegralFrom(x[i], ai[i], aiPrime[i]);
+  }
+  for (; i < count; i++) out[i] = airySquareIntegralFrom(x[i], ai[i], aiPrime[i]);
 }
 
 /**

@@ -24,6 +24,9 @@ export const DEGREE = 15;
 const SERIES = DEGREE + 2;
 const STRIDE = 2 * SERIES;
 
+/** Numbers in the table. */
+export const INTERLEAVED_LENGTH: number = CENTRES * STRIDE;
+
 let expanded: Float64Array | undefined;
 
 /** The expanded table; built on first use (0.15 ms, 2 ms in a cold process), then only read. */
@@ -55,6 +58,20 @@ export function airyTaylorCoefficients(j: number, a: Float64Array): void {
   a[1] = PAIR_AT_CENTRES[4 * j + 2];
   a[2] = 0.5 * c * a[0];
   for (let k = 3; k < a.length; k++) a[k] = (c * a[k - 2] + a[k - 3]) / (k * (k - 1));
+}
+
+/**
+ * The table as the compiled form wants it: for each centre the numbers of Ai and of Ai' in turn, so that the two fill a
+ * lane each. Length {@link INTERLEAVED_LENGTH}.
+ */
+export function interleaveTable(out: Float64Array): void {
+  const table = taylorTable();
+  for (let j = 0; j < CENTRES; j++) {
+    for (let k = 0; k < SERIES; k++) {
+      out[j * STRIDE + 2 * k] = table[j * STRIDE + k];
+      out[j * STRIDE + 2 * k + 1] = table[j * STRIDE + SERIES + k];
+    }
+  }
 }
 
 /** Index of the centre nearest to x, |x| ≤ TABLE_LIMIT. */
