@@ -23,6 +23,7 @@ import { eliminateStructuredSymmetric } from "../src/linalg/structured-symmetric
 import { halfLine } from "../src/quadrature/domain.ts";
 import { gaussLegendreShared } from "../src/quadrature/gauss-legendre.ts";
 import { airyPairInto, airySquareIntegralFrom } from "../src/special/airy.ts";
+import { fillPairs } from "../src/special/airy-pair.ts";
 import { airySquareIntegralInto } from "../src/special/airy-square-integral.ts";
 import { accuracyRows } from "./accuracy.ts";
 import { showTime, time } from "./timing.ts";
@@ -55,7 +56,7 @@ function fixedOrder(
   const { nodes, weights } = gaussLegendreShared(n);
   return (s, length = 10) => {
     for (let i = 0; i < n; i++) x[i] = s + 0.5 * length * (1 + nodes[i]);
-    airyPairInto(x, a, b, n, arithmetic);
+    fillPairs(x, a, b, n, arithmetic);
     airySquareIntegralInto(x, a, b, e, n, arithmetic);
     for (let i = 0; i < n; i++) {
       const w = 0.5 * length * weights[i];

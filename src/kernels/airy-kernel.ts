@@ -6,7 +6,7 @@
  */
 import type { Arithmetic } from "../core/web-assembly.ts";
 import type { IntegrableKernel } from "../determinant/kernel.ts";
-import { airyPairInto } from "../special/airy.ts";
+import { fillPairs } from "../special/airy-pair.ts";
 import { airySquareIntegralInto } from "../special/airy-square-integral.ts";
 
 /**
@@ -39,7 +39,7 @@ const AIRY_KERNEL: IntegrableKernel = Object.freeze({
   ): void {
     const ai = left[0];
     const aiPrime = left[1];
-    airyPairInto(nodes, ai, aiPrime, count, arithmetic);
+    fillPairs(nodes, ai, aiPrime, count, arithmetic);
     airySquareIntegralInto(nodes, ai, aiPrime, diagonal, count, arithmetic);
   },
 });

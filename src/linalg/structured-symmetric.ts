@@ -25,7 +25,7 @@ import { type Arithmetic, type Compiled, compiled } from "../core/web-assembly.t
 /** Pivot pairs with at least so many rows from the first on are swept in scaled form. The compiled form agrees. */
 const SCALED_FROM = 48;
 /** From so many rows on the compiled form pays: with arrays in its memory, and with arrays to be copied. */
-const COMPILED_FROM = 10;
+const COMPILED_FROM = 4;
 const COPIED_FROM = 40;
 
 /**
@@ -56,23 +56,37 @@ export function eliminateStructuredSymmetric(
   least: number,
   arithmetic: Arithmetic = "automatic",
 ): number {
-  if (!gapsAreModerate(x, rows)) return eliminateOneByOne(x, a, b, e, pivots, rows, least);
   if (arithmetic !== "plain" && (arithmetic === "wasm" || rows >= COMPILED_FROM)) {
-    const found = compiled();
-    if (found !== undefined) {
-      const px = placeOf(x);
-      const pa = placeOf(a);
-      const pb = placeOf(b);
-      const pe = placeOf(e);
-      if (px >= 0 && pa >= 0 && pb >= 0 && pe >= 0) {
-        return found.routines.eliminateStructuredSymmetric(px, pa, pb, pe, pivots, rows, least);
-      }
-      if ((arithmetic === "wasm" || rows >= COPIED_FROM) && 4 * (rows + 1) <= found.memory.free) {
-        return eliminateCopies(found, x, a, b, e, pivots, rows, least);
-      }
-    }
+    const done = eliminateCompiled(x, a, b, e, pivots, rows, least, arithmetic);
+    if (done >= 0) return done;
   }
-  return eliminatePairs(x, a, b, e, pivots, rows, least);
+  if (gapsAreModerate(x, rows)) return eliminatePairs(x, a, b, e, pivots, rows, least);
+  return eliminateOneByOne(x, a, b, e, pivots, rows, least);
+}
+
+/** The compiled form; −1, and nothing done, where it cannot be had, does not pay or does not take such nodes. */
+function eliminateCompiled(
+  x: Float64Array,
+  a: Float64Array,
+  b: Float64Array,
+  e: Float64Array,
+  pivots: number,
+  rows: number,
+  least: number,
+  arithmetic: Arithmetic,
+): number {
+  const found = compiled();
+  if (found === undefined) return -1;
+  const px = placeOf(x);
+  const pa = placeOf(a);
+  const pb = placeOf(b);
+  const pe = placeOf(e);
+  if (px >= 0 && pa >= 0 && pb >= 0 && pe >= 0) {
+    return found.routines.eliminateStructuredSymmetric(px, pa, pb, pe, pivots, rows, least);
+  }
+  const pays = arithmetic === "wasm" || rows >= COPIED_FROM;
+  if (!pays || 4 * even(rows) > found.memory.free) return -1;
+  return eliminateCopies(found, x, a, b, e, pivots, rows, least);
 }
 
 /** Copies into linear memory and back; nobody else runs in between, so the free part need not be lent. */
@@ -104,6 +118,7 @@ function eliminateCopies(
     rows,
     least,
   );
+  if (done < 0) return done;
   for (let i = 0, at = mark; i < rows; i++, at++) {
     a[i] = numbers[at + step];
     b[i] = numbers[at + 2 * step];

@@ -137,6 +137,17 @@ export function airyPairInto(
 ): void {
   requireArrays(x, ai, aiPrime, count);
   requireArithmetic("arithmetic", arithmetic);
+  fillPairs(x, ai, aiPrime, count, arithmetic);
+}
+
+/** {@link airyPairInto} without checks, for kernels. */
+export function fillPairs(
+  x: Float64Array,
+  ai: Float64Array,
+  aiPrime: Float64Array,
+  count: number,
+  arithmetic: Arithmetic,
+): void {
   const found = count < COMPILED_FROM && arithmetic !== "wasm" ? undefined : compiledPairs(arithmetic);
   if (found === undefined) {
     for (let i = 0; i < count; i++) writePair(x[i], ai, i, aiPrime, i);

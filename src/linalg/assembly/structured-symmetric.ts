@@ -9,6 +9,11 @@
 /** Pivot pairs with at least so many rows below them are swept in scaled form. The plain form has the same figure. */
 const SCALED_FROM: i32 = 48;
 
+// Nodes must lie below 2⁵⁰⁰ and all but one above 2⁻⁴⁴⁰ in size.
+const MOST: f64 = reinterpret<f64>(<u64>(1023 + 500) << 52);
+const LEAST: f64 = reinterpret<f64>(<u64>(1023 - 440) << 52);
+
+/** As the plain function; −1, and nothing done, for nodes of extreme scale. */
 export function eliminateStructuredSymmetric(
   x: usize,
   a: usize,
@@ -19,6 +24,14 @@ export function eliminateStructuredSymmetric(
   least: f64,
 ): i32 {
   const end: usize = (<usize>rows) << 3;
+  // gapsAreModerate of the plain form.
+  let tiny: i32 = 0;
+  for (let i: usize = 0; i < end; i += 8) {
+    const size = abs<f64>(load<f64>(x + i));
+    if (!(size < MOST)) return -1;
+    tiny += <i32>(size < LEAST);
+  }
+  if (tiny > 1) return -1;
   for (let q: i32 = 0; q < pivots; q += 2) {
     const p: usize = (<usize>q) << 3;
     const m: f64 = 1.0 - load<f64>(e + p);

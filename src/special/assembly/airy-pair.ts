@@ -12,17 +12,27 @@ const PAIR_STRIDE: usize = 2 * 17 * 8;
 /** Bytes a centre: coefficients 0 … 12 of the ratio. */
 const RATIO_STRIDE: usize = 13 * 8;
 
-/** Ai and Ai' at `count` points, up to the first one outside [−20, 20]; returns how many were done. */
+/**
+ * Ai and Ai' at `count` points, up to the first one outside [−20, 20]; returns how many were done.
+ *
+ * First the places in the table, then the series, so that many of their chains run at once. Between the two a point's
+ * step lies in `ai` and the place of its centre in `aiPrime`; either may be `x` itself.
+ */
 export function airyPair(x: usize, ai: usize, aiPrime: usize, count: i32, table: usize): i32 {
-  for (let i: i32 = 0; i < count; i++) {
-    const at: usize = (<usize>i) << 3;
+  let n: i32 = 0;
+  for (; n < count; n++) {
+    const at: usize = (<usize>n) << 3;
     const value = load<f64>(x + at);
-    if (!(value >= -LIMIT && value <= LIMIT)) return i;
+    if (!(value >= -LIMIT && value <= LIMIT)) break;
     const j: i32 = <i32>(4.0 * (value + LIMIT) + 0.5);
-    const step: f64 = value - (<f64>j * 0.25 - LIMIT);
-    const t = f64x2.splat(step);
-    const s = f64x2.splat(step * step);
-    const p: usize = table + <usize>j * PAIR_STRIDE;
+    store<f64>(ai + at, value - (<f64>j * 0.25 - LIMIT));
+    store<usize>(aiPrime + at, table + <usize>j * PAIR_STRIDE);
+  }
+  for (let i: i32 = 0; i < n; i++) {
+    const at: usize = (<usize>i) << 3;
+    const p = load<usize>(aiPrime + at);
+    const t = v128.load64_splat(ai + at);
+    const s = f64x2.mul(t, t);
     // Coefficient k lies at 16 (k + 1) bytes, the tail of the leading one at 0.
     let even = f64x2.add(f64x2.mul(v128.load(p, 240), s), v128.load(p, 208));
     let odd = f64x2.add(f64x2.mul(v128.load(p, 256), s), v128.load(p, 224));
@@ -43,10 +53,13 @@ export function airyPair(x: usize, ai: usize, aiPrime: usize, count: i32, table:
     v128.store64_lane(ai + at, pair, 0);
     v128.store64_lane(aiPrime + at, pair, 1);
   }
-  return count;
+  return n;
 }
 
-/** ∫Ai² from (x, Ai, Ai') at `count` points, up to the first one above 20 or NaN; returns how many were done. */
+/**
+ * ∫Ai² from (x, Ai, Ai') at `count` points, up to the first one above 20 or NaN; returns how many were done. On the
+ * table two points at a time.
+ */
 export function airySquareIntegral(
   x: usize,
   ai: usize,
@@ -55,33 +68,51 @@ export function airySquareIntegral(
   count: i32,
   table: usize,
 ): i32 {
-  for (let i: i32 = 0; i < count; i++) {
+  let i: i32 = 0;
+  while (i < count) {
     const at: usize = (<usize>i) << 3;
-    const value = load<f64>(x + at);
-    const a = load<f64>(ai + at);
-    if (value < 0.0) {
+    const x0 = load<f64>(x + at);
+    if (x0 < 0.0) {
+      const a = load<f64>(ai + at);
       const b = load<f64>(aiPrime + at);
-      store<f64>(out + at, b * b - value * a * a);
+      store<f64>(out + at, b * b - x0 * a * a);
+      i++;
       continue;
     }
-    if (!(value <= LIMIT)) return i;
-    const j: i32 = <i32>(4.0 * value + 0.5);
-    const t: f64 = value - <f64>j * 0.25;
-    const p: usize = table + <usize>j * RATIO_STRIDE;
-    let sum = load<f64>(p, 96);
-    sum = sum * t + load<f64>(p, 88);
-    sum = sum * t + load<f64>(p, 80);
-    sum = sum * t + load<f64>(p, 72);
-    sum = sum * t + load<f64>(p, 64);
-    sum = sum * t + load<f64>(p, 56);
-    sum = sum * t + load<f64>(p, 48);
-    sum = sum * t + load<f64>(p, 40);
-    sum = sum * t + load<f64>(p, 32);
-    sum = sum * t + load<f64>(p, 24);
-    sum = sum * t + load<f64>(p, 16);
-    sum = sum * t + load<f64>(p, 8);
-    sum = sum * t + load<f64>(p);
-    store<f64>(out + at, sum * a * a);
+    if (!(x0 <= LIMIT)) return i;
+    const x1: f64 = i + 1 < count ? load<f64>(x + at, 8) : -1.0;
+    if (x1 >= 0.0 && x1 <= LIMIT) {
+      const a = v128.load(ai + at);
+      v128.store(out + at, f64x2.mul(f64x2.mul(ratio(x0, x1, table), a), a));
+      i += 2;
+    } else {
+      const a = load<f64>(ai + at);
+      store<f64>(out + at, f64x2.extract_lane(ratio(x0, x0, table), 0) * a * a);
+      i++;
+    }
   }
   return count;
+}
+
+/** The ratio of ∫Ai² to Ai² at two points of [0, 20]. */
+function ratio(x0: f64, x1: f64, table: usize): v128 {
+  const j0: i32 = <i32>(4.0 * x0 + 0.5);
+  const j1: i32 = <i32>(4.0 * x1 + 0.5);
+  const t = f64x2.replace_lane(f64x2.splat(x0 - <f64>j0 * 0.25), 1, x1 - <f64>j1 * 0.25);
+  const p: usize = table + <usize>j0 * RATIO_STRIDE;
+  const q: usize = table + <usize>j1 * RATIO_STRIDE;
+  let sum = v128.load64_lane(q, v128.load64_zero(p, 96), 1, 96);
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 88), 1, 88));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 80), 1, 80));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 72), 1, 72));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 64), 1, 64));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 56), 1, 56));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 48), 1, 48));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 40), 1, 40));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 32), 1, 32));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 24), 1, 24));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 16), 1, 16));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 8), 1, 8));
+  sum = f64x2.add(f64x2.mul(sum, t), v128.load64_lane(q, v128.load64_zero(p, 0), 1, 0));
+  return sum;
 }
