@@ -36,10 +36,12 @@ interface Peer {
   readonly f2: number;
   readonly f2value: number;
   readonly f2batched: number;
+  readonly f2structured: number;
   readonly airy: number;
   readonly ndtr: number;
   readonly slogdet: Record<string, number>;
   readonly cholesky: Record<string, number>;
+  readonly structured: Record<string, number>;
   readonly slogdetComplex: Record<string, number>;
 }
 
@@ -156,30 +158,44 @@ table(
 );
 
 // One F2 value.
-const hot = fixedOrder(24);
+const hot = fixedOrder(24, "automatic");
+const plainHot = fixedOrder(24, "plain");
 const mlF2 = (): number => new LuDecomposition(airyMatrix(24, -2)).determinant;
 const one = time(() => hot(-2)).median;
+const plainOne = time(() => plainHot(-2)).median;
 const mlOne = time(mlF2).median;
 const exact = at("-2", "beta2");
+const whole = (arithmetic: Arithmetic) => () =>
+  fredholmDeterminant(airyKernel(), halfLine(-2), { arithmetic });
+const errorOf = (value: number | undefined): string =>
+  value === undefined ? "—" : Math.abs(value - exact).toExponential(1);
+const theirs = (seconds: number | undefined): string => (seconds === undefined ? "—" : showTime(seconds));
 table(
-  "F2(−2), one at a time, 24 nodes on (−2, 8)",
-  ["route", "time", "error", "ratio to ours"],
+  "F2(−2), 24 nodes on (−2, 8)",
+  ["route", "time", "error", "ratio to the first"],
   [
-    ["structured elimination", showTime(one), Math.abs(hot(-2).value - exact).toExponential(1), "1×"],
-    ["ml-matrix, dense LU", showTime(mlOne), Math.abs(mlF2() - exact).toExponential(1), ratio(mlOne, one)],
+    ["structured elimination, WebAssembly", showTime(one), errorOf(hot(-2).value), "1×"],
     [
-      "numpy/scipy, one at a time",
-      peer ? showTime(peer.f2) : "—",
-      peer ? Math.abs(peer.f2value - exact).toExponential(1) : "—",
-      ratio(peer?.f2, one),
+      "structured elimination, plain JavaScript",
+      showTime(plainOne),
+      errorOf(plainHot(-2).value),
+      ratio(plainOne, one),
     ],
-    ["numpy/scipy, batches of 200", peer ? showTime(peer.f2batched) : "—", "", ratio(peer?.f2batched, one)],
+    ["ml-matrix, dense LU", showTime(mlOne), errorOf(mlF2()), ratio(mlOne, one)],
+    ["numpy/scipy, one at a time", theirs(peer?.f2), errorOf(peer?.f2value), ratio(peer?.f2, one)],
+    ["numpy/scipy, dense, batches of 200", theirs(peer?.f2batched), "", ratio(peer?.f2batched, one)],
     [
-      "fredholmDeterminant, refined, with its error",
-      showTime(time(() => fredholmDeterminant(airyKernel(), halfLine(-2))).median),
-      Math.abs(fredholmDeterminant(airyKernel(), halfLine(-2)).value - exact).toExponential(1),
+      "numpy/scipy, structured, best of batches of 200, 500, 1000",
+      theirs(peer?.f2structured),
       "",
+      ratio(peer?.f2structured, one),
     ],
+    ...(["automatic", "plain"] as const).map((arithmetic) => [
+      `fredholmDeterminant, refined, with its error, ${arithmetic === "plain" ? "plain JavaScript" : "WebAssembly"}`,
+      showTime(time(whole(arithmetic)).median),
+      errorOf(whole(arithmetic)().value),
+      "",
+    ]),
   ],
 );
 
@@ -189,27 +205,37 @@ const logExact = Math.log(exact);
 const times: number[] = [];
 table(
   "log det(I − K), Airy kernel on (−2, 8)",
-  ["n", "ours", "error", "ml-matrix LU", "ratio", "numpy slogdet", "ratio", "numpy Cholesky", "ratio"],
+  [
+    "n",
+    "WebAssembly",
+    "plain JavaScript",
+    "error",
+    "ml-matrix LU",
+    "ratio",
+    "numpy slogdet",
+    "ratio",
+    "numpy Cholesky",
+    "ratio",
+    "numpy structured",
+    "ratio",
+  ],
   sizes.map((n) => {
-    const call = fixedOrder(n);
-    const ours = time(() => call(-2), n < 1000 ? 0.02 : 0.001, n < 1000 ? 9 : 5).median;
+    const call = fixedOrder(n, "automatic");
+    const plainCall = fixedOrder(n, "plain");
+    const timed = (f: () => unknown): number => time(f, n < 1000 ? 0.02 : 0.001, n < 1000 ? 9 : 5).median;
+    const ours = timed(() => call(-2));
     times.push(ours);
     const m = n <= 1000 ? airyMatrix(n, -2) : undefined;
     const ml = m
       ? time(() => new LuDecomposition(m).determinant, n < 500 ? 0.02 : 0.001, n < 500 ? 9 : 3).median
       : undefined;
-    const s = peer?.slogdet[n];
-    const c = peer?.cholesky[n];
+    const rivals = [ml, peer?.slogdet[n], peer?.cholesky[n], peer?.structured[n]];
     return [
       String(n),
       showTime(ours),
+      showTime(timed(() => plainCall(-2))),
       Math.abs(call(-2).logAbs - logExact).toExponential(1),
-      ml === undefined ? "—" : showTime(ml),
-      ratio(ml, ours),
-      s === undefined ? "—" : showTime(s),
-      ratio(s, ours),
-      c === undefined ? "—" : showTime(c),
-      ratio(c, ours),
+      ...rivals.flatMap((seconds) => [theirs(seconds), ratio(seconds, ours)]),
     ];
   }),
 );
@@ -239,14 +265,14 @@ table(
     ).median;
     const objects =
       n > 128 ? undefined : time(() => objectLogDeterminant(re, im, n, stride), 0.001, 3).median;
-    const theirs = peer?.slogdetComplex[n];
+    const numpy = peer?.slogdetComplex[n];
     return [
       String(n),
       showTime(ours),
       objects === undefined ? "—" : showTime(objects),
       ratio(objects, ours),
-      theirs === undefined ? "—" : showTime(theirs),
-      ratio(theirs, ours),
+      theirs(numpy),
+      ratio(numpy, ours),
     ];
   }),
 );
@@ -274,12 +300,21 @@ function objectLogDeterminant(re: Float64Array, im: Float64Array, n: number, str
 const points = Float64Array.from({ length: 10_000 }, (_, i) => -20 + (40 * i) / 9999);
 const left = new Float64Array(points.length);
 const right = new Float64Array(points.length);
-const airy = time(() => airyPairInto(points, left, right, points.length)).median / points.length;
+const airyIn = (arithmetic: Arithmetic): number =>
+  time(() => airyPairInto(points, left, right, points.length, arithmetic)).median / points.length;
+const airy = airyIn("automatic");
+const plainAiry = airyIn("plain");
 const bulk = Float64Array.from({ length: 10_000 }, (_, i) => -5 + (8 * i) / 9999);
 const probabilities = Float64Array.from({ length: 10_000 }, (_, i) => (i + 0.5) / 10_000);
 const out = new Float64Array(bulk.length);
 const rows: string[][] = [
-  ["Airy pair on [−20, 20]", showTime(airy), peer ? showTime(peer.airy) : "—", ratio(peer?.airy, airy)],
+  ["Airy pair on [−20, 20], WebAssembly", showTime(airy), theirs(peer?.airy), ratio(peer?.airy, airy)],
+  [
+    "Airy pair on [−20, 20], plain JavaScript",
+    showTime(plainAiry),
+    theirs(peer?.airy),
+    ratio(peer?.airy, plainAiry),
+  ],
 ];
 for (const beta of [1, 2, 4] as const) {
   const law = tracyWidom(beta);

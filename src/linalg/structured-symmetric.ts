@@ -12,18 +12,11 @@
  * pivot: that keeps 1 − det to full relative accuracy. Method: T. Kailath, S.-Y. Kung, M. Morf, J. Math. Anal.
  * Appl. 68 (1979) 395; I. Gohberg, T. Kailath, V. Olshevsky, Math. Comp. 64 (1995) 1557.
  *
- * Two pivots p, q go in one sweep over the rows, which halves the traffic of memory, and share one division,
- * 1/(x_i − x_p) = r (x_i − x_q) with r = 1/((x_i − x_p)(x_i − x_q)): two roundings more in v_i. Over many rows the
- * pivot's generators are divided by √m first (w_i = v_i/√m, a'_i = a_i + w_i a_q/√m, e'_i = e_i + w_i²), which saves
- * two products a row but waits for a square root.
- *
  * The compiled form (assembly/structured-symmetric.ts) runs the same operations in the same order: same bits.
  */
-import { even, placeOf } from "../core/linear-memory.ts";
+import { even, ROLE } from "../core/linear-memory.ts";
 import { type Arithmetic, type Compiled, compiled } from "../core/web-assembly.ts";
 
-/** Pivot pairs with at least so many rows from the first on are swept in scaled form. The compiled form agrees. */
-const SCALED_FROM = 48;
 /** From so many rows on the compiled form pays: with arrays in its memory, and with arrays to be copied. */
 const COMPILED_FROM = 4;
 const COPIED_FROM = 40;
@@ -39,12 +32,11 @@ const COPIED_FROM = 40;
  * @param e - Diagonal of A; overwritten, entries below `pivots` become the pivot complements.
  * @param pivots - Number of rows to eliminate.
  * @param rows - Number of rows in all.
- * @param least - Elimination stops before a pivot that is not above this; ≥ 0.
- * @param arithmetic - Compiled or plain; the bits are the same.
- * @returns Number of pivots done: `pivots`, or the index of the first pivot ≤ `least`; the rows below have then seen
- *   the pivots before it.
+ * @param least - Elimination stops before a pivot that is not above this.
+ * @param arithmetic - Compiled or plain loops; the bits are the same.
+ * @returns Number of pivots done: `pivots`, or the index of the first pivot ≤ `least`.
  *
- * Cost: about 4 n² multiply–adds and n²/4 divisions, no allocation.
+ * Cost: about 4 n² multiply–adds and n²/2 divisions, no allocation.
  */
 export function eliminateStructuredSymmetric(
   x: Float64Array,
@@ -60,11 +52,10 @@ export function eliminateStructuredSymmetric(
     const done = eliminateCompiled(x, a, b, e, pivots, rows, least, arithmetic);
     if (done >= 0) return done;
   }
-  if (gapsAreModerate(x, rows)) return eliminatePairs(x, a, b, e, pivots, rows, least);
-  return eliminateOneByOne(x, a, b, e, pivots, rows, least);
+  return eliminatePlain(x, a, b, e, pivots, rows, least);
 }
 
-/** The compiled form; −1, and nothing done, where it cannot be had, does not pay or does not take such nodes. */
+/** The compiled form; −1, and nothing done, where it cannot be had or does not pay. */
 function eliminateCompiled(
   x: Float64Array,
   a: Float64Array,
@@ -77,15 +68,16 @@ function eliminateCompiled(
 ): number {
   const found = compiled();
   if (found === undefined) return -1;
-  const px = placeOf(x);
-  const pa = placeOf(a);
-  const pb = placeOf(b);
-  const pe = placeOf(e);
-  if (px >= 0 && pa >= 0 && pb >= 0 && pe >= 0) {
-    return found.routines.eliminateStructuredSymmetric(px, pa, pb, pe, pivots, rows, least);
+  const { routines, memory } = found;
+  const px = memory.placeOf(x, ROLE.nodes);
+  const pa = px < 0 ? -1 : memory.placeOf(a, ROLE.first);
+  const pb = pa < 0 ? -1 : memory.placeOf(b, ROLE.second);
+  const pe = pb < 0 ? -1 : memory.placeOf(e, ROLE.diagonal);
+  if (pe >= 0) {
+    return routines.eliminateStructuredSymmetric(px, pa, pb, pe, pivots, rows, least);
   }
   const pays = arithmetic === "wasm" || rows >= COPIED_FROM;
-  if (!pays || 4 * even(rows) > found.memory.free) return -1;
+  if (!pays || 4 * even(rows) > memory.free) return -1;
   return eliminateCopies(found, x, a, b, e, pivots, rows, least);
 }
 
@@ -118,7 +110,6 @@ function eliminateCopies(
     rows,
     least,
   );
-  if (done < 0) return done;
   for (let i = 0, at = mark; i < rows; i++, at++) {
     a[i] = numbers[at + step];
     b[i] = numbers[at + 2 * step];
@@ -127,144 +118,8 @@ function eliminateCopies(
   return done;
 }
 
-/**
- * Whether products of two gaps and their reciprocals stay in range. Different doubles of which at most one is below
- * 2⁻⁴⁴⁰ in size differ by 2⁻⁴⁹³ or more.
- */
-function gapsAreModerate(x: Float64Array, rows: number): boolean {
-  let tiny = 0;
-  for (let i = 0; i < rows; i++) {
-    const size = Math.abs(x[i]);
-    if (!(size < 2 ** 500)) return false;
-    if (size < 2 ** -440) tiny++;
-  }
-  return tiny < 2;
-}
-
 /** The plain form. */
-function eliminatePairs(
-  x: Float64Array,
-  a: Float64Array,
-  b: Float64Array,
-  e: Float64Array,
-  pivots: number,
-  rows: number,
-  least: number,
-): number {
-  for (let p = 0; p < pivots; p += 2) {
-    const m = 1 - e[p];
-    if (!(m > least)) return p;
-    const inverse = 1 / m;
-    const q = p + 1;
-    if (q === pivots) {
-      sweepOne(x, a, b, e, p, rows, inverse);
-      return pivots;
-    }
-    const v = (a[q] * b[p] - b[q] * a[p]) * (1 / (x[q] - x[p]));
-    const t = v * inverse;
-    const eq = e[q] + t * v;
-    const mq = 1 - eq;
-    if (!(mq > least)) {
-      sweepOne(x, a, b, e, p, rows, inverse);
-      return q;
-    }
-    a[q] += t * a[p];
-    b[q] += t * b[p];
-    e[q] = eq;
-    if (rows - p < SCALED_FROM) sweepTwo(x, a, b, e, p, rows, inverse, 1 / mq);
-    else sweepTwoScaled(x, a, b, e, p, rows, 1 / Math.sqrt(m), 1 / Math.sqrt(mq));
-  }
-  return pivots;
-}
-
-/** Rows after pivot p. */
-function sweepOne(
-  x: Float64Array,
-  a: Float64Array,
-  b: Float64Array,
-  e: Float64Array,
-  p: number,
-  rows: number,
-  inverse: number,
-): void {
-  const xp = x[p];
-  const ap = a[p];
-  const bp = b[p];
-  for (let i = p + 1; i < rows; i++) {
-    const v = (a[i] * bp - b[i] * ap) * (1 / (x[i] - xp));
-    const t = v * inverse;
-    a[i] += t * ap;
-    b[i] += t * bp;
-    e[i] += t * v;
-  }
-}
-
-/** Rows after pivots p and p + 1, with the reciprocals of the two. */
-function sweepTwo(
-  x: Float64Array,
-  a: Float64Array,
-  b: Float64Array,
-  e: Float64Array,
-  p: number,
-  rows: number,
-  ip: number,
-  iq: number,
-): void {
-  const xp = x[p];
-  const ap = a[p];
-  const bp = b[p];
-  const xq = x[p + 1];
-  const aq = a[p + 1];
-  const bq = b[p + 1];
-  for (let i = p + 2; i < rows; i++) {
-    const gp = x[i] - xp;
-    const gq = x[i] - xq;
-    const r = 1 / (gp * gq);
-    const vp = (a[i] * bp - b[i] * ap) * (r * gq);
-    const tp = vp * ip;
-    const ai = a[i] + tp * ap;
-    const bi = b[i] + tp * bp;
-    const vq = (ai * bq - bi * aq) * (r * gp);
-    const tq = vq * iq;
-    a[i] = ai + tq * aq;
-    b[i] = bi + tq * bq;
-    e[i] = e[i] + tp * vp + tq * vq;
-  }
-}
-
-/** The same with the reciprocal roots of the two. */
-function sweepTwoScaled(
-  x: Float64Array,
-  a: Float64Array,
-  b: Float64Array,
-  e: Float64Array,
-  p: number,
-  rows: number,
-  sp: number,
-  sq: number,
-): void {
-  const xp = x[p];
-  const ap = a[p] * sp;
-  const bp = b[p] * sp;
-  const xq = x[p + 1];
-  const aq = a[p + 1] * sq;
-  const bq = b[p + 1] * sq;
-  for (let i = p + 2; i < rows; i++) {
-    const gp = x[i] - xp;
-    const gq = x[i] - xq;
-    const r = 1 / (gp * gq);
-    const v = (a[i] * bp - b[i] * ap) * (r * gq);
-    const ai = a[i] + v * ap;
-    const bi = b[i] + v * bp;
-    const u = (ai * bq - bi * aq) * (r * gp);
-    a[i] = ai + u * aq;
-    b[i] = bi + u * bq;
-    e[i] = e[i] + v * v + u * u;
-  }
-}
-
-/** For nodes of extreme scale: one pivot a sweep, every gap divided by on its own. Compiled or not, this form. */
-function eliminateOneByOne(
+function eliminatePlain(
   x: Float64Array,
   a: Float64Array,
   b: Float64Array,

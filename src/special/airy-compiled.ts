@@ -2,7 +2,7 @@
  * The Airy functions' side of the compiled part: their tables in its memory, and its loops on arrays in that memory or
  * elsewhere. The loops are in assembly/airy-pair.ts.
  */
-import { type LinearMemory, placeOf } from "../core/linear-memory.ts";
+import { type LinearMemory, ROLE } from "../core/linear-memory.ts";
 import { type Arithmetic, type Compiled, type CompiledRoutines, compiled } from "../core/web-assembly.ts";
 
 /** The compiled part with a table in its memory. */
@@ -32,7 +32,7 @@ export function compiledTable(
     const table = memory.keep(length);
     if (table === undefined) return undefined;
     fill(table);
-    return { routines, memory, table: placeOf(table) };
+    return { routines, memory, table: table.byteOffset };
   };
   return (arithmetic) => {
     if (arithmetic === "plain") return undefined;
@@ -57,10 +57,10 @@ export function runPairs(
   from: number,
   count: number,
 ): number {
-  const px = placeOf(x);
-  const pa = placeOf(ai);
-  const pb = placeOf(aiPrime);
-  if (px >= 0 && pa >= 0 && pb >= 0) {
+  const px = memory.placeOf(x, ROLE.nodes);
+  const pa = px < 0 ? -1 : memory.placeOf(ai, ROLE.first);
+  const pb = pa < 0 ? -1 : memory.placeOf(aiPrime, ROLE.second);
+  if (pb >= 0) {
     const shift = 8 * from;
     return from + routines.airyPair(px + shift, pa + shift, pb + shift, count - from, table);
   }

@@ -12,7 +12,7 @@
  *
  * Source: C. Tracy, H. Widom, Commun. Math. Phys. 159 (1994) 151 for the diagonal; DLMF 9.7, 9.11 for the rest.
  */
-import { placeOf } from "../core/linear-memory.ts";
+import { ROLE } from "../core/linear-memory.ts";
 import type { Arithmetic } from "../core/web-assembly.ts";
 import { compiledTable } from "./airy-compiled.ts";
 import { exponentHead } from "./airy-exponent.ts";
@@ -131,13 +131,12 @@ export function airySquareIntegralInto(
   arithmetic: Arithmetic = "automatic",
 ): void {
   const found = compiledRatios(arithmetic);
-  const px = placeOf(x);
-  const pa = placeOf(ai);
-  const pb = placeOf(aiPrime);
-  const po = placeOf(out);
-  const within = px >= 0 && pa >= 0 && pb >= 0 && po >= 0;
+  const px = found?.memory.placeOf(x, ROLE.nodes) ?? -1;
+  const pa = px < 0 ? -1 : (found?.memory.placeOf(ai, ROLE.first) ?? -1);
+  const pb = pa < 0 ? -1 : (found?.memory.placeOf(aiPrime, ROLE.second) ?? -1);
+  const po = pb < 0 ? -1 : (found?.memory.placeOf(out, ROLE.diagonal) ?? -1);
   let i = 0;
-  while (found !== undefined && within && i < count) {
+  while (found !== undefined && po >= 0 && i < count) {
     const shift = 8 * i;
     const left = count - i;
     i += found.routines.airySquareIntegral(px + shift, pa + shift, pb + shift, po + shift, left, found.table);

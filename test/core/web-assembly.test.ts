@@ -5,7 +5,7 @@ import { execFileSync } from "node:child_process";
 import { fileURLToPath } from "node:url";
 import { afterEach, describe, expect, it, vi } from "vitest";
 import { InvalidArgumentError } from "../../src/core/errors.ts";
-import { LinearMemory, placeOf } from "../../src/core/linear-memory.ts";
+import { LinearMemory, ROLE } from "../../src/core/linear-memory.ts";
 import {
   compile,
   compiled,
@@ -150,12 +150,21 @@ describe("linear memory", () => {
     expect([...(kept ?? [])]).toEqual([0, 0, 0, 0, 0, 0, 0]);
   });
 
-  it("gives arrays their place, at a lane", () => {
+  it("knows where an array lies, remembered or not", () => {
     const memory = new LinearMemory(new ArrayBuffer(8 * 64));
-    expect(placeOf(memory.view(6, 4))).toBe(48);
-    expect(placeOf(new Float64Array(4))).toBe(-1);
-    expect(placeOf(memory.view(6, 4).slice())).toBe(-1);
-    expect(placeOf(memory.view(6, 4).subarray(1))).toBe(-1);
+    const views = Array.from({ length: 30 }, (_, k) => memory.view(2 * k, 2));
+    for (let round = 0; round < 2; round++) {
+      for (const role of Object.values(ROLE)) {
+        views.forEach((view, k) => {
+          expect(memory.placeOf(view, role)).toBe(16 * k);
+          expect(memory.placeOf(view, role)).toBe(16 * k);
+        });
+        const elsewhere = [new Float64Array(4), memory.view(6, 4).slice(), new Float64Array(64)];
+        for (const array of elsewhere) expect(memory.placeOf(array, role)).toBe(-1);
+      }
+    }
+    expect(memory.placeOf(memory.view(6, 4).subarray(1), ROLE.nodes)).toBe(56);
+    expect(new LinearMemory(new ArrayBuffer(64)).placeOf(views[0], ROLE.nodes)).toBe(-1);
   });
 });
 
@@ -166,7 +175,7 @@ describe("a borrowed work space", () => {
     const before = memory.free;
     const workspace = Workspace.borrow(20, "automatic");
     const arrays = [5, 4, 1, 6].map((count) => workspace.take(count));
-    for (const array of arrays) expect(placeOf(array) % 16).toBe(0);
+    for (const array of arrays) expect(memory.placeOf(array, ROLE.nodes) % 16).toBe(0);
     arrays.forEach((array, k) => {
       array.fill(k);
     });
@@ -183,13 +192,13 @@ describe("a borrowed work space", () => {
     const first = workspace.take(8).fill(1);
     const second = workspace.take(1000).fill(2);
     const huge = workspace.take(before).fill(3);
-    expect(placeOf(second)).toBeGreaterThanOrEqual(0);
-    expect(placeOf(huge)).toBe(-1);
+    expect(memory.placeOf(second, ROLE.nodes)).toBeGreaterThanOrEqual(0);
+    expect(memory.placeOf(huge, ROLE.nodes)).toBe(-1);
     expect([first[7], second[0], second[999], huge[before - 1]]).toEqual([1, 2, 2, 3]);
     workspace.release();
     expect(memory.free).toBe(before);
     const plain = Workspace.borrow(8, "plain");
-    expect(placeOf(plain.take(8))).toBe(-1);
+    expect(memory.placeOf(plain.take(8), ROLE.nodes)).toBe(-1);
     plain.release();
     expect(memory.free).toBe(before);
   });
