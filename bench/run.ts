@@ -167,6 +167,7 @@ const mlOne = time(mlF2).median;
 const exact = at("-2", "beta2");
 const whole = (arithmetic: Arithmetic) => () =>
   fredholmDeterminant(airyKernel(), halfLine(-2), { arithmetic });
+for (let k = 0; k < 3000; k++) for (const arithmetic of ["automatic", "plain"] as const) whole(arithmetic)();
 const errorOf = (value: number | undefined): string =>
   value === undefined ? "—" : Math.abs(value - exact).toExponential(1);
 const theirs = (seconds: number | undefined): string => (seconds === undefined ? "—" : showTime(seconds));

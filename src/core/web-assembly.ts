@@ -18,7 +18,7 @@ export type Arithmetic = "automatic" | "wasm" | "plain";
 /** The functions of the module. Pointers are bytes in linear memory; nothing is checked. */
 export interface CompiledRoutines {
   /** `eliminateStructuredSymmetric` of `linalg/structured-symmetric.ts`. */
-  eliminateStructuredSymmetric(
+  readonly eliminateStructuredSymmetric: (
     x: number,
     a: number,
     b: number,
@@ -26,18 +26,18 @@ export interface CompiledRoutines {
     pivots: number,
     rows: number,
     least: number,
-  ): number;
+  ) => number;
   /** Ai, Ai' up to the first point outside the table; returns the number done. */
-  airyPair(x: number, ai: number, aiPrime: number, count: number, table: number): number;
+  readonly airyPair: (x: number, ai: number, aiPrime: number, count: number, table: number) => number;
   /** ∫Ai² up to the first point beyond the table; returns the number done. */
-  airySquareIntegral(
+  readonly airySquareIntegral: (
     x: number,
     ai: number,
     aiPrime: number,
     out: number,
     count: number,
     table: number,
-  ): number;
+  ) => number;
 }
 
 /** The routines with their memory. */
@@ -69,8 +69,11 @@ export function compile(host: WebAssemblyHost | undefined): Compiled | undefined
   try {
     if (host === undefined) return undefined;
     const { exports } = new host.Instance(new host.Module(decodeBase64(WEB_ASSEMBLY_MODULE)));
-    const { memory } = exports as { memory: { readonly buffer: ArrayBuffer } };
-    return { routines: exports as CompiledRoutines, memory: new LinearMemory(memory.buffer) };
+    const { eliminateStructuredSymmetric, airyPair, airySquareIntegral, memory } =
+      exports as CompiledRoutines & { readonly memory: { readonly buffer: ArrayBuffer } };
+    // An object of our own: engines look the members of the exports object up at every call.
+    const routines = { eliminateStructuredSymmetric, airyPair, airySquareIntegral };
+    return { routines, memory: new LinearMemory(memory.buffer) };
   } catch {
     return undefined;
   }

@@ -14,7 +14,7 @@
  */
 import { ROLE } from "../core/linear-memory.ts";
 import type { Arithmetic } from "../core/web-assembly.ts";
-import { compiledTable } from "./airy-compiled.ts";
+import { compiledTable, type TabulatedRoutines } from "./airy-compiled.ts";
 import { exponentHead } from "./airy-exponent.ts";
 import { airyAi, airyAiPrime, airyAiScaled } from "./airy-pair.ts";
 import { PAIR_AT_CENTRES, SERIES_R, SQUARE_RATIO_AT_CENTRES } from "./airy-tables.ts";
@@ -131,19 +131,32 @@ export function airySquareIntegralInto(
   arithmetic: Arithmetic = "automatic",
 ): void {
   const found = compiledRatios(arithmetic);
-  const px = found?.memory.placeOf(x, ROLE.nodes) ?? -1;
-  const pa = px < 0 ? -1 : (found?.memory.placeOf(ai, ROLE.first) ?? -1);
-  const pb = pa < 0 ? -1 : (found?.memory.placeOf(aiPrime, ROLE.second) ?? -1);
-  const po = pb < 0 ? -1 : (found?.memory.placeOf(out, ROLE.diagonal) ?? -1);
+  const done = found === undefined ? 0 : runSquares(found, x, ai, aiPrime, out, count);
+  for (let i = done; i < count; i++) out[i] = airySquareIntegralFrom(x[i], ai[i], aiPrime[i]);
+}
+
+/** The compiled loop, where all arrays are in its memory; the number of points done, `count` or 0. */
+function runSquares(
+  { routines, memory, table }: TabulatedRoutines,
+  x: Float64Array,
+  ai: Float64Array,
+  aiPrime: Float64Array,
+  out: Float64Array,
+  count: number,
+): number {
+  const px = memory.placeOf(x, ROLE.nodes);
+  const pa = px < 0 ? -1 : memory.placeOf(ai, ROLE.first);
+  const pb = pa < 0 ? -1 : memory.placeOf(aiPrime, ROLE.second);
+  const po = pb < 0 ? -1 : memory.placeOf(out, ROLE.diagonal);
+  if (po < 0) return 0;
   let i = 0;
-  while (found !== undefined && po >= 0 && i < count) {
+  while (i < count) {
     const shift = 8 * i;
-    const left = count - i;
-    i += found.routines.airySquareIntegral(px + shift, pa + shift, pb + shift, po + shift, left, found.table);
+    i += routines.airySquareIntegral(px + shift, pa + shift, pb + shift, po + shift, count - i, table);
     // It stops at a point outside the table.
     for (; i < count && !(x[i] <= TABLE_LIMIT); i++) out[i] = airySquareIntegralFrom(x[i], ai[i], aiPrime[i]);
   }
-  for (; i < count; i++) out[i] = airySquareIntegralFrom(x[i], ai[i], aiPrime[i]);
+  return count;
 }
 
 /**
