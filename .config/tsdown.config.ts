@@ -8,6 +8,7 @@ export default defineConfig({
     special: "src/special/index.ts",
     determinant: "src/determinant/index.ts",
     kernels: "src/kernels/index.ts",
+    precision: "src/precision/index.ts",
     laws: "src/laws/index.ts",
     assessment: "src/assessment/index.ts",
     report: "src/report/index.ts",
