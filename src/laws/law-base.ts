@@ -51,6 +51,17 @@ export function completeLaw(core: LawCore): Law {
     q <= 0.5 ? solveUpper(core, Math.log(q)) : solveLower(core, Math.log1p(-q));
   const quantile = (p: number): number => (Number.isNaN(p) ? p : lower(requireProbability("p", p)));
   const upperQuantile = (q: number): number => (Number.isNaN(q) ? q : upper(requireProbability("q", q)));
+  // Beyond ½ the other tail has the digits: log(1 − e^l) = log(−expm1(l)).
+  const quantileFromLog = (l: number): number => {
+    if (Number.isNaN(l)) return l;
+    const log = requireLogProbability(l);
+    return log <= -Math.LN2 ? solveLower(core, log) : solveUpper(core, Math.log(-Math.expm1(log)));
+  };
+  const upperQuantileFromLog = (l: number): number => {
+    if (Number.isNaN(l)) return l;
+    const log = requireLogProbability(l);
+    return log <= -Math.LN2 ? solveUpper(core, log) : solveLower(core, Math.log(-Math.expm1(log)));
+  };
   return Object.freeze({
     name: core.name,
     symbol: core.symbol,
@@ -65,6 +76,8 @@ export function completeLaw(core: LawCore): Law {
     logSurvival: core.logSurvival,
     quantile,
     upperQuantile,
+    quantileFromLog,
+    upperQuantileFromLog,
     get mean(): number {
       return momentsOf().mean;
     },
@@ -120,6 +133,13 @@ function requireProbability(argument: string, p: unknown): number {
     throw new InvalidArgumentError(argument, "a probability strictly between 0 and 1", p);
   }
   return p;
+}
+
+function requireLogProbability(value: unknown): number {
+  if (typeof value !== "number" || !(value >= -1e15 && value < 0)) {
+    throw new InvalidArgumentError("logProbability", "a logarithm of a probability, from -1e15 to below 0", value);
+  }
+  return value;
 }
 
 function into(f: (x: number) => number): (x: Float64Array, out: Float64Array) => void {

@@ -81,6 +81,18 @@ export interface Law {
    * @throws {@link InvalidArgumentError} outside (0, 1).
    */
   upperQuantile(q: number): number;
+  /**
+   * x with log cdf(x) = `logProbability`: for probabilities below the smallest double, or given as logarithms.
+   * @param logProbability - Natural logarithm, −1e15 ≤ `logProbability` < 0.
+   * @throws {@link InvalidArgumentError} outside that range.
+   */
+  quantileFromLog(logProbability: number): number;
+  /**
+   * x with log survival(x) = `logProbability`.
+   * @param logProbability - Natural logarithm, −1e15 ≤ `logProbability` < 0.
+   * @throws {@link InvalidArgumentError} outside that range.
+   */
+  upperQuantileFromLog(logProbability: number): number;
 
   /** Mean. */
   readonly mean: number;

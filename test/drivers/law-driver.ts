@@ -165,6 +165,26 @@ export function driveLaw(law: Law, reference: LawReference): void {
       );
     });
 
+    it("comes back from quantiles of logarithms, far beyond the smallest double", () => {
+      fc.assert(
+        fc.property(fc.double({ min: -18, max: 15, noNaN: true }), (exponent) => {
+          const log = -(10 ** exponent);
+          // A rounding of x moves the logarithm by its slope; close to 0 the logarithm is minus the other tail.
+          const low = law.quantileFromLog(log);
+          const lowSlope = Math.exp(law.logPdf(low) - law.logCdf(low));
+          const lowAllowed = 1e-13 * Math.abs(log) + 2 ** -51 * Math.abs(low) * lowSlope;
+          expect(Math.abs(law.logCdf(low) - log)).toBeLessThan(lowAllowed);
+          const high = law.upperQuantileFromLog(log);
+          const highSlope = Math.exp(law.logPdf(high) - law.logSurvival(high));
+          const highAllowed = 1e-13 * Math.abs(log) + 2 ** -51 * Math.abs(high) * highSlope;
+          expect(Math.abs(law.logSurvival(high) - log)).toBeLessThan(highAllowed);
+        }),
+        settings,
+      );
+      expect(law.quantileFromLog(Number.NaN)).toBeNaN();
+      expect(law.upperQuantileFromLog(Math.log(1e-200))).toBeCloseTo(law.upperQuantile(1e-200), 10);
+    });
+
     it("is a distribution: cdf + survival = 1, cdf increases, logarithms fit, everywhere", () => {
       fc.assert(
         fc.property(wide, fc.double({ min: 1e-6, max: 1, noNaN: true }), (x, step) => {
@@ -264,6 +284,10 @@ export function driveLaw(law: Law, reference: LawReference): void {
         expect(() => law.quantile(p)).toThrow(/p: expected a probability strictly between 0 and 1/);
         expect(() => law.upperQuantile(p)).toThrow(/q: expected a probability/);
         expect(() => law.estimate("quantile", p)).toThrow(InvalidArgumentError);
+      }
+      for (const log of [0, 1, -1e16, Number.NEGATIVE_INFINITY, "a" as unknown as number]) {
+        expect(() => law.quantileFromLog(log)).toThrow(/logProbability: expected a logarithm/);
+        expect(() => law.upperQuantileFromLog(log)).toThrow(/logProbability: expected a logarithm/);
       }
       for (const k of [0, 7, 1.5, Number.NaN])
         expect(() => law.cumulant(k)).toThrow(/k: expected an integer from 1 to 6/);

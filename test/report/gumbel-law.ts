@@ -58,6 +58,8 @@ export function gumbelLaw(options: GumbelOptions = {}): Law {
       convention: "location 0, scale 1",
     },
     ...functions,
+    quantileFromLog: (l: number) => -Math.log(-l),
+    upperQuantileFromLog: (l: number) => upperQuantile(Math.exp(l)),
     mean: 0.5772156649015329,
     variance: Math.PI ** 2 / 6,
     skewness: 1.1395470994046486,
