@@ -26,7 +26,8 @@ import { airyPairInto, airySquareIntegralFrom } from "../src/special/airy.ts";
 import { fillPairs } from "../src/special/airy-pair.ts";
 import { airySquareIntegralInto } from "../src/special/airy-square-integral.ts";
 import { accuracyRows } from "./accuracy.ts";
-import { showTime, time } from "./timing.ts";
+import { precisionRows } from "./precision.ts";
+import { ratio, showTime, time } from "./timing.ts";
 
 const reference = JSON.parse(readFileSync("test/fixtures/tracy-widom.json", "utf8"));
 
@@ -101,10 +102,6 @@ function runPeer(): Peer | undefined {
   if (run.status !== 0 || !run.stdout) return undefined;
   const peer = JSON.parse(run.stdout) as Peer;
   return peer.error === undefined ? peer : undefined;
-}
-
-function ratio(theirs: number | undefined, ours: number): string {
-  return theirs === undefined ? "—" : `${(theirs / ours).toPrecision(3)}×`;
 }
 
 function table(title: string, head: readonly string[], rows: readonly (readonly string[])[]): void {
@@ -335,6 +332,12 @@ for (const beta of [1, 2, 4] as const) {
   rows.push([`F${beta} quantile, array`, showTime(quantile), "", ""]);
 }
 table("Special functions and the fast route, a value", ["what", "ours", "scipy", "ratio"], rows);
+
+table(
+  "F2(−2) with many digits (whole: value with error, all orders; mpmath: samples and elimination; decimal.js: elimination)",
+  ["digits", "first call", "whole", "one order", "mpmath", "ratio", "decimal.js", "ratio"],
+  precisionRows(),
+);
 
 table(
   "Accuracy against tabulated values (44 points on [−40, 30], 50 digits)",

@@ -48,3 +48,8 @@ export function showTime(seconds: number): string {
   if (seconds < 1) return `${(seconds * 1e3).toPrecision(3)} ms`;
   return `${seconds.toPrecision(3)} s`;
 }
+
+/** Their time over ours, or a dash. */
+export function ratio(theirs: number | undefined, ours: number): string {
+  return theirs === undefined ? "—" : `${(theirs / ours).toPrecision(3)}×`;
+}
