@@ -137,7 +137,11 @@ function requireProbability(argument: string, p: unknown): number {
 
 function requireLogProbability(value: unknown): number {
   if (typeof value !== "number" || !(value >= -1e15 && value < 0)) {
-    throw new InvalidArgumentError("logProbability", "a logarithm of a probability, from -1e15 to below 0", value);
+    throw new InvalidArgumentError(
+      "logProbability",
+      "a logarithm of a probability, from -1e15 to below 0",
+      value,
+    );
   }
   return value;
 }
