@@ -11,7 +11,9 @@ import {
   rootOf,
   shiftEnclosure,
   times,
+  withBits,
 } from "./enclosure.ts";
+import { bitLength } from "./fixed-point.ts";
 
 /** Ai, Ai′, ∫_x^∞ Ai with their bounds. */
 export interface EnclosedAiry {
@@ -25,7 +27,12 @@ export interface EnclosedAiry {
  * integral e^{−ζ}.
  */
 export function airySeriesReach(zeta: number, bits: number, withIntegral: boolean): boolean {
-  return (withIntegral ? 1 : 2) * zeta * Math.LOG2E > bits + 24;
+  return (withIntegral ? 1 : 2) * zeta * Math.LOG2E > bits + 2 * Math.log2(bits) + 20;
+}
+
+/** Guard bits of the sums: for the square of the number of terms, which is below 0.7 `precision`. */
+function withGuard(precision: bigint): bigint {
+  return precision + BigInt(2 * bitLength(precision) + 8);
 }
 
 /** Sums of u_k ζ^−k, v_k ζ^−k, w_k ζ^−k over k ≡ 0, 1, 2, 3 (mod 4). */
@@ -48,9 +55,8 @@ interface SeriesSums {
  * `units` covers remainder and rounding. Costs one product a term for all three.
  */
 function seriesSums(zeta: Enclosure, work: bigint, withIntegral: boolean): SeriesSums {
-  const inverse = over(exactInteger(1n), zeta, work);
-  const z =
-    inverse.bits >= work ? inverse.value >> (inverse.bits - work) : inverse.value << (work - inverse.bits);
+  const inverse = withBits(over(exactInteger(1n), zeta, work + 8n), work);
+  const z = inverse.value;
   const u = [0n, 0n, 0n, 0n];
   const v = [0n, 0n, 0n, 0n];
   const w = [0n, 0n, 0n, 0n];
@@ -65,16 +71,18 @@ function seriesSums(zeta: Enclosure, work: bigint, withIntegral: boolean): Serie
     k++;
     const last = withIntegral ? termW : termU;
     const numerator = BigInt((6 * k - 5) * (6 * k - 3) * (6 * k - 1));
-    termU = (((termU * z) >> work) * numerator) / BigInt(216 * k * (2 * k - 1));
+    termU = ((termU * z * numerator) >> work) / BigInt(216 * k * (2 * k - 1));
     termV = (termU * BigInt(6 * k + 1)) / BigInt(1 - 6 * k);
-    if (withIntegral) termW = termU + (((termW * z) >> work) * BigInt(2 * k - 1)) / 2n;
+    if (withIntegral) termW = termU + ((termW * z * BigInt(2 * k - 1)) >> (work + 1n));
     const size = withIntegral ? termW : termU;
     if (size <= 4n) break;
     if (size > last) throw new RangeError("the asymptotic series does not reach this precision");
   }
-  // Terms fall, so that each carries at most a few units from the inverse (2 and its own), the products and quotients;
-  // the series for w multiplies older ones by (k − ½)/ζ < 1. The first term left out is at most 4.
-  const units = BigInt(10 * k + 16) + inverse.units * BigInt(k);
+  // A step adds 2 units of rounding and, δ being the units of 1/ζ, δ ζ times the term, which is below δ since the terms
+  // fall from 5/72ζ or 41/72ζ on. Falling ratios: u_k ζ^−k is within k (2 + δ) units, v_k within 7/5 of that and one, and
+  // all k of them within k² (3 + 2δ) + k. For the integral k < ζ: ratios of u below ½, so u_k within 4 + 2δ, w_k within
+  // k (5 + 3δ), the sum within the same bound. The first term left out is at most 4, times 1.5 for the integral.
+  const units = BigInt(k) ** 2n * (3n + 2n * inverse.units) + BigInt(k) + 8n;
   return { u, v, w, units };
 }
 
@@ -96,7 +104,7 @@ function enclosed(value: bigint, work: bigint, units: bigint): Enclosure {
  * @param x - At least 1; {@link airySeriesReach} must hold.
  */
 export function airyFarRight(x: Enclosure, precision: bigint, withIntegral: boolean): EnclosedAiry {
-  const work = precision + 12n;
+  const work = withGuard(precision);
   const long = work + 2n * exponentOf(x); // ζ is exponentiated: its integer digits cost as many more
   const { root, zeta, fourth } = scales(x, long);
   const sums = seriesSums(zeta, work, withIntegral);
@@ -120,7 +128,7 @@ export function airyFarRight(x: Enclosure, precision: bigint, withIntegral: bool
  * @param x - At least 1; {@link airySeriesReach} must hold.
  */
 export function airyFarLeft(x: Enclosure, precision: bigint, withIntegral: boolean): EnclosedAiry {
-  const work = precision + 12n;
+  const work = withGuard(precision);
   const long = work + 2n * exponentOf(x);
   const { root, zeta, fourth } = scales(x, long);
   const sums = seriesSums(zeta, work, withIntegral);

@@ -1,6 +1,7 @@
 /**
  * Bessel functions of the first kind by Hankel's expansion.
  */
+import { orderAsNumber } from "./bessel-series.ts";
 import type { Rational } from "./decimal.ts";
 import { enclosedPi, exponentOf, sineCosineOf } from "./enclosed-functions.ts";
 import {
@@ -16,19 +17,25 @@ import {
 } from "./enclosure.ts";
 import { bitLength } from "./fixed-point.ts";
 
+/** Guard bits of the sums beside those of the largest term: for the square of the number of terms. */
+function guardBits(order: number, bits: number): number {
+  return 2 * Math.ceil(Math.log2(bits + order + 16)) + 8;
+}
+
 /**
- * log2 of the largest term of Hankel's expansion if its terms get below 2^−(bits + 20) divided by the largest, otherwise
- * `undefined`. Doubles suffice: the answer only chooses the method and the guard bits.
+ * log2 of the largest term of Hankel's expansion if its terms get below the units of {@link besselFar} at `bits`,
+ * otherwise `undefined`. Doubles suffice: the answer only chooses the method and the guard bits.
  */
 export function hankelReach(order: number, x: number, bits: number): number | undefined {
   let size = 0;
   let largest = 0;
   const square = 4 * order * order;
+  const wanted = bits + guardBits(order, bits) + 4;
   for (let k = 1; ; k++) {
     const odd = 2 * k - 1;
     size += Math.log2(Math.abs(square - odd * odd) / (8 * k * x));
     largest = Math.max(largest, size);
-    if (size < -bits - largest - 20 && k >= order + 1) return largest;
+    if (size < -wanted - largest && k >= order + 1) return largest;
     if (k > 2 * x + order + 2 || size > 2 * x) return undefined;
   }
 }
@@ -55,23 +62,28 @@ function phase(order: Rational, x: Enclosure, work: bigint): [sine: Enclosure, c
  */
 export function besselFar(order: Rational, x: Enclosure, precision: bigint, largest: number): Enclosure {
   const { numerator: p, denominator: q } = order;
-  const work = precision + BigInt(Math.ceil(largest)) + 16n;
-  const inverse = withBits(over(exactInteger(1n), x, work + 8n), work);
+  const work = precision + BigInt(Math.ceil(largest) + guardBits(orderAsNumber(order), Number(precision)));
+  const exponent = exponentOf(x);
+  const place = work + (exponent > 0n ? exponent : 0n); // 1/x to `work` digits of its own
+  const inverse = withBits(over(exactInteger(1n), x, work + 8n), place);
   const sums = [0n, 0n, 0n, 0n];
   const least = Number((p > 0n ? p : 0n) / q) + 2;
-  const most = least + 2 * Math.ceil(2 ** Number(exponentOf(x))) + 8; // the terms grow beyond 2x
+  const most = least + 2 * Math.ceil(2 ** Number(exponent)) + 8; // the terms grow beyond 2x
   let term = 1n << work;
   let k = 0;
   for (;;) {
     sums[k & 3] += term;
     k++;
     const odd = BigInt(2 * k - 1) * q;
-    term = (((term * inverse.value) >> work) * (4n * p * p - odd * odd)) / (8n * BigInt(k) * q * q);
+    term = ((term * inverse.value * (4n * p * p - odd * odd)) >> place) / (8n * BigInt(k) * q * q);
     if (k >= least && term <= 2n && term >= -2n) break;
     if (k > most) throw new RangeError("Hankel's expansion does not reach this precision");
   }
-  // Each term within (3 + 2 units of the inverse) · its largest growth; the first one left out is at most 2.
-  const units = (BigInt(k + 1) * (4n + 2n * inverse.units)) << BigInt(Math.ceil(largest) + 1);
+  // A step adds 2 units of rounding and, δ being the units of 1/x, 2δ times the term; later terms are at most the largest
+  // one times earlier ones (the ratios above 1 come first). So each of the k terms is within k (2 + 2δ) units times the
+  // largest (one binary digit for the doubles it comes from); the first ones left out are at most 2.
+  const growth = BigInt(Math.ceil(largest) + 1);
+  const units = ((BigInt(k) ** 2n * (2n + 2n * inverse.units)) << growth) + 4n;
   const even = { value: sums[0] - sums[2], bits: work, units };
   const uneven = { value: sums[1] - sums[3], bits: work, units };
   const [sine, cosine] = phase(order, x, work);

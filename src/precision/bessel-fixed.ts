@@ -57,8 +57,15 @@ function factor(order: Rational, x: Enclosure | undefined, precision: bigint): E
 }
 
 /** Rough log2 of (x/2)^ν / Γ(ν + 1): the size of J_ν(x) below its first zero. */
-export function log2OfFactor(order: number, log2OfX: number): number {
-  return order * (log2OfX - 1) - log2OfGamma(order + 1);
+export function log2OfFactor(order: Rational, log2OfX: number): number {
+  // Γ(ν + 1) = Γ(ν + 2)/(ν + 1): ν + 1 may be too small for doubles.
+  const nu = orderAsNumber(order);
+  return nu * (log2OfX - 1) - log2OfGamma(nu + 2) + log2OfNextOrder(order);
+}
+
+/** log2(ν + 1). */
+export function log2OfNextOrder({ numerator, denominator }: Rational): number {
+  return log2OfFixed(numerator + denominator, 0n) - log2OfFixed(denominator, 0n);
 }
 
 function log2OfGamma(z: number): number {
@@ -93,7 +100,7 @@ export function besselEnclosures(
     }
   }
   // factor · ₀F₁: the second to the digits that the size of the first leaves.
-  const lead = log2OfFactor(nu, log2OfFixed(x, xBits));
+  const lead = log2OfFactor(order, log2OfFixed(x, xBits));
   const relative = BigInt(Math.max(16, Math.ceil(Number(bits) + lead) + 4));
   const [first, second] = confluentLimitPair(order, -x * x, 2n * xBits + 2n, relative);
   const prefix = factor(order, exact, relative);
@@ -172,7 +179,7 @@ export function besselEntirePairFixed(
         return [value, over(next, times(power, argument, work), work)];
       }
     }
-    const lead = log2OfFactor(nu, 0) + (size < 0 ? log2OfConfluentLimit(nu, -size / 4) : 0);
+    const lead = log2OfFactor(order, 0) + (size < 0 ? log2OfConfluentLimit(nu, -size / 4) : 0);
     const relative = BigInt(Math.max(16, Math.ceil(Number(precision) + lead) + 4));
     const [a, b] = confluentLimitPair(order, -x, bits + 2n, relative);
     const prefix = factor(order, undefined, relative);

@@ -8,8 +8,9 @@ import { absolute, bitLength, log2OfFixed, numberFromFixed } from "./fixed-point
 /**
  * ₀F₁(; ν + 1; y) = Σ y^k / (k! (ν + 1)_k) and ₀F₁(; ν + 2; y) at `bits`, within one unit (DLMF 16.2.1).
  *
- * With |y| for y the sums are at most M = (1 + 1/(ν + 1)) e^{min(2√|y|, |y|/(ν + 1))}; K terms, each within a few units
- * that grow as the later terms do, are within 4 K (1 + 1/(ν + 1)) M. One product a term. The order stays exact.
+ * With |y| for y the sums are at most M = (1 + (1 + |y|^{1/4})/(ν + 1)) e^{min(2√|y|, |y|/(ν + 1))}, the latter because
+ * (ν + 1)_k ≥ (ν + 1)^k and (½)_k, or (ν + 1)(k − 1)! for ν < −½. K terms, each within a few units that grow as the later
+ * terms do, are within 4 K (1 + 1/(ν + 1)) M units. One product a term. The order stays exact.
  *
  * @param order - ν > −1.
  * @param y - Fixed-point number at `yBits`, taken as exact.
@@ -26,7 +27,9 @@ export function confluentLimitPair(
   const logOfFirst = log2OfFixed(p, 0n) - log2OfFixed(q, 0n); // log2(ν + 1)
   const growth = Math.min(2 * Math.sqrt(size), size * 2 ** -logOfFirst) * Math.LOG2E;
   const most = Number(bits) + 12 * Math.sqrt(size) + 16;
-  const guard = BigInt(Math.ceil(growth + 2 * Math.max(0, 1 - logOfFirst) + Math.log2(most)) + 8);
+  const guard = BigInt(
+    Math.ceil(growth + 2 * Math.max(0, 1 - logOfFirst) + Math.log2(most * (1 + size ** 0.25))) + 8,
+  );
   const work = bits + guard;
   const place = yBits < work ? yBits : work; // a short argument stays short
   const scaled = y >> (yBits - place);

@@ -20,8 +20,8 @@ export function exponentialOf(a: Enclosure, precision: bigint): Enclosure {
   if (2n * a.units > 1n << a.bits) throw new RangeError("the argument is not known well enough");
   const e = exponentialEnclosure(a.value, a.bits, precision);
   // e^{a ± δ} differs from e^a by less than 2 δ e^a for δ ≤ 1/2.
-  const spread = ((2n * e.value * a.units) >> a.bits) + 1n;
-  return { value: e.value, bits: e.bits, units: e.units + spread + (a.units === 0n ? 0n : spread >> 8n) };
+  const spread = a.units === 0n ? 0n : ((2n * (e.value + e.units) * a.units) >> a.bits) + 1n;
+  return { value: e.value, bits: e.bits, units: e.units + spread };
 }
 
 /** log a at `bits`. The bound of a must be less than half of a. */
@@ -47,9 +47,10 @@ export function exponentOf(a: Enclosure): bigint {
   return BigInt(bitLength(absolute(a.value))) - a.bits;
 }
 
-/** a^ν for a > 0 to about `precision` digits: whole power, root, or exponential of the rest. */
+/** a^ν for a > 0 to about `precision` digits: whole power below 2^20, root or exponential of the rest. */
 export function realPower(a: Enclosure, { numerator, denominator }: Rational, precision: bigint): Enclosure {
-  const whole = numerator >= 0n ? numerator / denominator : -(-numerator / denominator);
+  const nearest = numerator / denominator; // towards 0
+  const whole = bitLength(nearest) <= 20 ? nearest : 0n;
   const rest = numerator - whole * denominator;
   const work = precision + 8n + BigInt(bitLength(whole));
   let power = powerOf(a, whole < 0n ? -whole : whole, work);
@@ -59,7 +60,7 @@ export function realPower(a: Enclosure, { numerator, denominator }: Rational, pr
   let part: Enclosure;
   if (2n * size === denominator) part = rootOf(a, work);
   else {
-    const long = work + BigInt(bitLength(exponentOf(a)));
+    const long = work + BigInt(bitLength(exponentOf(a)) + bitLength(nearest));
     const exponent = over(
       times(logarithmOf(a, long), exactInteger(size), long),
       exactInteger(denominator),

@@ -2,7 +2,13 @@
  * Bessel functions to many digits.
  */
 import { InvalidArgumentError } from "../core/errors.ts";
-import { besselEnclosures, log2OfFactor, modifiedBesselEnclosure, slopeOf } from "./bessel-fixed.ts";
+import {
+  besselEnclosures,
+  log2OfFactor,
+  log2OfNextOrder,
+  modifiedBesselEnclosure,
+  slopeOf,
+} from "./bessel-fixed.ts";
 import { orderAsNumber } from "./bessel-series.ts";
 import {
   type ExactInput,
@@ -54,7 +60,7 @@ function requireArguments(order: PreciseInput, x: PreciseInput, most: number): B
   const nu = orderAsNumber(exactOrder);
   const isZero = exact.numerator === 0n;
   if (isZero && nu < 0) throw new InvalidArgumentError("x", "a number > 0 when the order is negative", x);
-  const lead = isZero ? 0 : log2OfFactor(nu, log2OfExact(exact));
+  const lead = isZero ? 0 : log2OfFactor(exactOrder, log2OfExact(exact));
   if (lead < -MOST_EXPONENT) {
     throw new InvalidArgumentError("x", "an argument at which the function is not below 1e-400000", x);
   }
@@ -72,7 +78,7 @@ function besselWithSlope(all: BesselArguments, bits: bigint): [Enclosure, Enclos
   const { order, nu, x, lead } = all;
   const log2OfX = log2OfExact(x);
   const first = nu >= 0 ? Math.min(0, lead) : Math.max(0, lead) + 1;
-  const second = Math.min(0, lead + log2OfX - 1 - Math.log2(nu + 1));
+  const second = Math.min(0, lead + log2OfX - 1 - log2OfNextOrder(order));
   const slope = Math.max(Math.log2(Math.abs(nu) + 2 ** -60) + first, log2OfX + second) + 1;
   const curvature =
     Math.max(
@@ -143,7 +149,7 @@ export function preciseBesselJPrime(
       : exactValue(0n, digits);
   }
   // About |ν|/x times J_ν for small x; for ν = 0, x/2.
-  const next = all.lead + log2OfExact(all.x) - 1 - Math.log2(all.nu + 1);
+  const next = all.lead + log2OfExact(all.x) - 1 - log2OfNextOrder(all.order);
   const size =
     numerator === 0n
       ? next
@@ -173,8 +179,9 @@ export function preciseBesselI(
   const all = requireArguments(order, x, MOST_MODIFIED_ARGUMENT);
   if (all.x.numerator === 0n) return exactValue(all.nu === 0 ? 1n : 0n, digits);
   // x I_ν′/I_ν = ν + x I_{ν+1}/I_ν ≤ |ν| + x²/(2(ν + 1)) and, for ν ≥ −1/2, ≤ |ν| + x.
-  const ratio = Math.abs(all.nu) + (all.nu >= -0.5 ? all.size : all.size ** 2 / (2 * (all.nu + 1)));
-  const own = BigInt(Math.max(0, Math.ceil(Math.log2(ratio + 1))) + 4);
+  const square = 2 * log2OfExact(all.x) - 1 - log2OfNextOrder(all.order);
+  const ratio = Math.max(0, Math.log2(Math.abs(all.nu) + all.size + 1), all.nu >= -0.5 ? 0 : square);
+  const own = BigInt(Math.ceil(ratio) + 5);
   return refine(digits, 8, (bits) => {
     const argument = encloseExact(all.x, bits + own);
     const found = modifiedBesselEnclosure(all.order, argument.value, argument.bits, bits);

@@ -121,10 +121,10 @@ function rate(history: readonly Convergence[]): number {
 
 /**
  * By how many bits `order` is better than the last order whose error is known. For analytic kernels convergence speeds
- * up with the order, so that the last rate is a safe one; a tenth of it is kept back.
+ * up with the order, so that the last rate is a safe one; half of it is kept back.
  */
 function predictedGain(history: readonly Convergence[], order: number): number {
-  return history.length < 3 ? 0 : 0.9 * rate(history) * (order - history[history.length - 1].order);
+  return history.length < 3 ? 0 : 0.5 * rate(history) * (order - history[history.length - 1].order);
 }
 
 /** Whether an algebraic rate is seen, of which the target asks more than the most points allowed. */

@@ -7,8 +7,11 @@ import { bitLength } from "./fixed-point.ts";
 import { logarithmFixed } from "./logarithm.ts";
 
 /**
- * log 1, …, log count at `bits`, each within 8 bitLength(count) units: primes from their neighbours,
- * log p = ½ (log(p − 1) + log(p + 1)) + artanh(1/(2p² − 1)), composites by addition.
+ * log 1, …, log count at `bits`: primes from their neighbours, log p = ½ (log(p − 1) + log(p + 1)) + artanh(1/(2p² − 1)),
+ * composites by addition.
+ *
+ * log n is within C log2 n units, C = `bits`/8 + 8: an artanh has at most `bits`/8 + 2 terms of about one unit each, and
+ * with log2(p ± 1) = 1 + log2((p ± 1)/2), where log 2 has one unit, C − 1 of ½ C (log2(p − 1) + log2(p + 1)) is spared.
  */
 function logarithmsOfIntegers(count: number, bits: bigint): bigint[] {
   const factor = new Int32Array(count + 2);
