@@ -3,7 +3,11 @@
  */
 import { spawnSync } from "node:child_process";
 import Decimal from "decimal.js";
+import { airyPairFixed } from "../src/precision/airy-fixed.ts";
 import { preciseAiryKernel } from "../src/precision/airy-kernels.ts";
+import { fixedFromExact, readExact } from "../src/precision/decimal.ts";
+import { eliminatePair } from "../src/precision/elimination-pair.ts";
+import { numberFromFixed } from "../src/precision/fixed-point.ts";
 import { preciseGaussLegendre } from "../src/precision/gauss-rules.ts";
 import { preciseAiryAi, preciseAiryAiPrime } from "../src/precision/precise-airy.ts";
 import { preciseDeterminant } from "../src/precision/precise-determinant.ts";
@@ -59,6 +63,28 @@ function decimalElimination(
   };
 }
 
+/** The same in fixed point. */
+function fixedElimination(
+  digits: number,
+  length: number,
+  nodes: readonly string[],
+  weights: readonly string[],
+): () => number {
+  const bits = BigInt(Math.ceil((digits + 10) * Math.log2(10)));
+  const from = (text: string): bigint => fixedFromExact(readExact("text", text), bits);
+  const half = BigInt(length / 2);
+  const x = nodes.map((t) => half * from(t) + (BigInt(length / 2 - 2) << bits));
+  const weight = weights.map((t) => half * from(t));
+  const pairs = x.map((t) => airyPairFixed(t, bits));
+  return () => {
+    const a = pairs.map((p) => p[0]);
+    const b = pairs.map((p) => p[1]);
+    const diagonal = x.map((t, i) => (b[i] * b[i] - ((t * a[i]) >> bits) * a[i]) >> bits);
+    const found = eliminatePair({ x: x.slice(), weight: weight.slice(), a, b, diagonal }, true, bits);
+    return found ? numberFromFixed(found.value, found.scale) : Number.NaN;
+  };
+}
+
 /** Rows: digits, points, ours whole and at one order, mpmath, decimal.js, ratios. */
 export function precisionRows(): string[][] {
   const rules = CASES.map(({ digits, order, length }) => ({
@@ -89,6 +115,9 @@ export function precisionRows(): string[][] {
     const bits = BigInt(Math.ceil((digits + 10) * Math.log2(10)) + 56);
     const single = time(() => discretize(scene, order, bits), 0.2, 5).median;
     const { nodes, weights } = rules[k];
+    const own = fixedElimination(digits, length, nodes, weights);
+    if (Math.abs(own() - Number(found.value)) > 1e-15) throw new Error(`elimination gives ${own()}`);
+    const ownTime = time(own, 0.1, 5).median;
     const elimination = decimalElimination(digits, length, nodes, weights);
     const theirs = time(elimination, 0.1, 3).median;
     const agreed = elimination().slice(0, digits) === found.value.slice(0, digits);
@@ -103,8 +132,9 @@ export function precisionRows(): string[][] {
       `${order}: ${showTime(single)}`,
       mpmath === undefined ? "—" : showTime(mpmath),
       ratio(mpmath, single),
+      showTime(ownTime),
       showTime(theirs),
-      ratio(theirs, single),
+      ratio(theirs, ownTime),
     ];
   });
 }
