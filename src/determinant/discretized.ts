@@ -47,7 +47,19 @@ export function discretizedDeterminant(
   workspace.reset();
   const scene = sceneOf(kernel, panels, order, z, extra, workspace);
   if (kernel.kind === "smooth") return smoothDeterminant(scene, kernel);
+  if (extra !== undefined && meetsNode(scene, order)) {
+    // The entry between two equal points is 0/0. One point more moves all nodes: neighbouring rules have none in common.
+    return discretizedDeterminant(kernel, panels, order + 1, z, extra, workspace);
+  }
   return kernel.antisymmetricPair ? pairDeterminant(scene, kernel) : generalDeterminant(scene, kernel);
+}
+
+/** Whether the extra point lies so near to a node that divided differences between them have lost digits. */
+function meetsNode({ nodes, pivots }: Scene, order: number): boolean {
+  const point = nodes[pivots];
+  const reach = (1e-3 * Math.abs(nodes[pivots - 1] - nodes[0])) / (order * order);
+  for (let i = 0; i < pivots; i++) if (Math.abs(nodes[i] - point) <= reach) return true;
+  return false;
 }
 
 /** Two generators, symmetric: the fast route. */

@@ -140,6 +140,17 @@ describe("fredholmDeterminant", () => {
     }
   });
 
+  it("gives the resolvent at a point that is a node, too", () => {
+    // Every odd rule on (0, 1) has the node ½.
+    const exact = determinantWithResolvent(sine, interval(0, 1), 0.5).resolvent;
+    for (let order = 1; order <= 25; order++) {
+      for (const point of [0.5, 0.5 + 1e-12]) {
+        const { resolvent } = determinantWithResolvent(sine, interval(0, 1), point, { order });
+        expect(Math.abs(resolvent.value - exact.value)).toBeLessThanOrEqual(resolvent.error + exact.error);
+      }
+    }
+  });
+
   it("gives the logarithmic derivative as the resolvent at the end point", () => {
     const h = 1e-3;
     const at = (s: number): number => fredholmDeterminant(airyKernel(), halfLine(s)).logAbs;
