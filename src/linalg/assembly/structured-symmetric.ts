@@ -70,7 +70,6 @@ export function eliminateStructuredSymmetric(
   return pivots;
 }
 
-// @ts-ignore: decorator
 @inline
 function eliminateRow(
   x: usize,
